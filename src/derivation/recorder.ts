@@ -1,0 +1,150 @@
+import { type Formula, textOf } from './formula.ts'
+import type { Given, Procedure, Searched, Trace } from './trace.ts'
+
+export type StepKind = 'leaf' | 'formula' | 'search' | 'kernel'
+
+/** One line of a derivation, as in the result contract. Every input equals the value of an earlier step. */
+export interface Step {
+  readonly id: string
+  readonly kind: StepKind
+  readonly symbol: string
+  readonly meaning: string
+  /** `formula`: the expression that ran (mathjs notation). `search`: the residual. `kernel`: the method. */
+  readonly formula: string
+  readonly inputs: Readonly<Record<string, number>>
+  /** For each input, the id of the step it came from. */
+  readonly from: Readonly<Record<string, string>>
+  readonly value: number
+  readonly unit: string
+  readonly source: string
+  readonly tolerance?: string
+  readonly path?: string
+  /** Set on the steps that end a check. */
+  readonly yields?: 'required' | 'available' | 'margin'
+}
+
+/** A given number that a formula may use without being told: the node's and the scenario's own values. */
+export interface KnownLeaf extends Given {
+  readonly value: number
+}
+
+/** Thrown when an input cannot be traced to an earlier step or a known leaf: a fault of the program. */
+export class DerivationGap extends Error {
+  override name = 'DerivationGap'
+}
+
+type Draft = Omit<Step, 'id' | 'from'> & { from: Record<string, number> }
+
+/** Computes like the plain trace and writes down every step, linking each input to where it came from. */
+export class Recorder implements Trace {
+  readonly recording = true
+  readonly #drafts: Draft[] = []
+  readonly #known: readonly KnownLeaf[]
+
+  constructor(known: readonly KnownLeaf[]) {
+    this.#known = known
+  }
+
+  calc<A extends number[]>(formula: Formula<A>, ...args: A): number {
+    const text = textOf(formula.run)
+    const inputs: Record<string, number> = {}
+    text.parameters.forEach((name, k) => {
+      inputs[name] = args[k] as number
+    })
+    const value = formula.run(...args)
+    const { symbol, meaning, unit, source } = formula
+    this.#push({ kind: 'formula', symbol, meaning, unit, source, formula: text.expression, value }, inputs)
+    return value
+  }
+
+  leaf(about: Given, value: number): number {
+    this.#push({ kind: 'leaf', ...about, formula: '', value }, {})
+    return value
+  }
+
+  search(about: Searched, value: number, inputs: Readonly<Record<string, number>> = {}): number {
+    const { symbol, meaning, unit, source, residual, tolerance } = about
+    this.#push({ kind: 'search', symbol, meaning, unit, source, formula: residual, tolerance, value }, inputs)
+    return value
+  }
+
+  kernel(about: Procedure, value: number, inputs: Readonly<Record<string, number>> = {}): number {
+    const { symbol, meaning, unit, source, method, error } = about
+    this.#push(
+      { kind: 'kernel', symbol, meaning, unit, source, formula: method, tolerance: error, value },
+      inputs,
+    )
+    return value
+  }
+
+  /** Where the step with this value stands; prefers one of the same symbol, then the latest. */
+  #find(name: string, value: number): number {
+    let byValue = -1
+    for (let k = this.#drafts.length - 1; k >= 0; k--) {
+      const draft = this.#drafts[k]!
+      if (!Object.is(draft.value, value)) continue
+      if (draft.symbol === name) return k
+      if (byValue < 0) byValue = k
+    }
+    const named = this.#known.find((leaf) => leaf.symbol === name && Object.is(leaf.value, value))
+    if (named !== undefined) return this.#adopt(named)
+    if (byValue >= 0) return byValue
+    const alike = this.#known.find((leaf) => Object.is(leaf.value, value))
+    if (alike !== undefined) return this.#adopt(alike)
+    throw new DerivationGap(`no earlier step or known value yields ${name} = ${value}`)
+  }
+
+  #adopt(leaf: KnownLeaf): number {
+    const { value, ...about } = leaf
+    this.leaf(about, value)
+    return this.#drafts.length - 1
+  }
+
+  #push(draft: Omit<Draft, 'from' | 'inputs'>, inputs: Readonly<Record<string, number>>): void {
+    const from: Record<string, number> = {}
+    for (const [name, value] of Object.entries(inputs)) from[name] = this.#find(name, value)
+    this.#drafts.push({ ...draft, inputs: { ...inputs }, from })
+  }
+
+  /**
+   * The derivation of a finished check: only the steps that its three results rest on, in an order in which
+   * every step follows its inputs, the results last.
+   */
+  steps(required: number | null, available: number | null, margin: number | null): readonly Step[] {
+    const ends = new Map<number, NonNullable<Step['yields']>>()
+    const mark = (value: number | null, role: NonNullable<Step['yields']>): void => {
+      if (value !== null) ends.set(this.#find(role, value), role)
+    }
+    mark(required, 'required')
+    mark(available, 'available')
+    mark(margin, 'margin')
+    return this.#number(this.#ordered(ends), ends)
+  }
+
+  #ordered(ends: ReadonlyMap<number, string>): readonly number[] {
+    const kept = new Set<number>()
+    const keep = (k: number): void => {
+      if (kept.has(k)) return
+      kept.add(k)
+      for (const source of Object.values(this.#drafts[k]!.from)) keep(source)
+    }
+    for (const k of ends.keys()) keep(k)
+    const inner = [...kept].filter((k) => !ends.has(k))
+    const needsEnd = inner.some((k) =>
+      Object.values(this.#drafts[k]!.from).some((source) => ends.has(source)),
+    )
+    const ascending = (a: number, b: number): number => a - b
+    if (needsEnd) return [...kept].sort(ascending)
+    return [...inner.sort(ascending), ...[...ends.keys()].sort(ascending)]
+  }
+
+  #number(order: readonly number[], ends: ReadonlyMap<number, NonNullable<Step['yields']>>): readonly Step[] {
+    const ids = new Map(order.map((k, place) => [k, `s${place + 1}`]))
+    return order.map((k) => {
+      const draft = this.#drafts[k]!
+      const from = Object.fromEntries(Object.entries(draft.from).map(([name, j]) => [name, ids.get(j)!]))
+      const role = ends.get(k)
+      return { ...draft, id: ids.get(k)!, from, ...(role === undefined ? {} : { yields: role }) }
+    })
+  }
+}
