@@ -17,11 +17,12 @@ export interface About {
 /** An arithmetic expression over named SI numbers, with what it means. */
 export interface Formula<A extends readonly number[]> extends About {
   readonly run: (...args: A) => number
+  readonly text: FormulaText
 }
 
 /** Declares a formula. The arrow function must be a single expression over its parameters. */
 export function formula<A extends number[]>(about: About, run: (...args: A) => number): Formula<A> {
-  return { ...about, run }
+  return { ...about, run, text: textOf(run) }
 }
 
 /** The parameters and the expression of a formula in the notation of mathjs (`^` for powers, `log` natural). */
@@ -51,5 +52,7 @@ export function textOf(run: (...args: any[]) => number): FormulaText {
     .replace(/\( /g, '(')
     .replace(/ \)/g, ')')
     .replace(/,\s*\)/g, ')')
+    // Bundlers print 0.5 as .5: people read the former.
+    .replace(/(?<![\w.])\.(?=\d)/g, '0.')
   return { parameters: head === '' ? [] : head.split(',').filter((name) => name !== ''), expression }
 }

@@ -1,5 +1,5 @@
-import { type Formula, textOf } from './formula.ts'
-import type { Given, Procedure, Searched, Trace } from './trace.ts'
+import type { Formula } from './formula.ts'
+import type { Given, Procedure, Searched, Trace, UserExpression } from './trace.ts'
 
 export type StepKind = 'leaf' | 'formula' | 'search' | 'kernel'
 
@@ -40,20 +40,23 @@ export class Recorder implements Trace {
   readonly recording = true
   readonly #drafts: Draft[] = []
   readonly #known: readonly KnownLeaf[]
+  readonly #shown: number[] = []
 
   constructor(known: readonly KnownLeaf[]) {
     this.#known = known
   }
 
   calc<A extends number[]>(formula: Formula<A>, ...args: A): number {
-    const text = textOf(formula.run)
     const inputs: Record<string, number> = {}
-    text.parameters.forEach((name, k) => {
+    formula.text.parameters.forEach((name, k) => {
       inputs[name] = args[k] as number
     })
     const value = formula.run(...args)
     const { symbol, meaning, unit, source } = formula
-    this.#push({ kind: 'formula', symbol, meaning, unit, source, formula: text.expression, value }, inputs)
+    this.#push(
+      { kind: 'formula', symbol, meaning, unit, source, formula: formula.text.expression, value },
+      inputs,
+    )
     return value
   }
 
@@ -68,6 +71,12 @@ export class Recorder implements Trace {
     return value
   }
 
+  expression(about: UserExpression, value: number, inputs: Readonly<Record<string, number>>): number {
+    const { symbol, meaning, unit, source, text } = about
+    this.#push({ kind: 'formula', symbol, meaning, unit, source, formula: text, value }, inputs)
+    return value
+  }
+
   kernel(about: Procedure, value: number, inputs: Readonly<Record<string, number>> = {}): number {
     const { symbol, meaning, unit, source, method, error } = about
     this.#push(
@@ -75,6 +84,10 @@ export class Recorder implements Trace {
       inputs,
     )
     return value
+  }
+
+  show(value: number): void {
+    this.#shown.push(value)
   }
 
   /** Where the step with this value stands; prefers one of the same symbol, then the latest. */
@@ -101,6 +114,7 @@ export class Recorder implements Trace {
   }
 
   #push(draft: Omit<Draft, 'from' | 'inputs'>, inputs: Readonly<Record<string, number>>): void {
+    if (this.#drafts.some((known) => same(known, draft, inputs))) return
     const from: Record<string, number> = {}
     for (const [name, value] of Object.entries(inputs)) from[name] = this.#find(name, value)
     this.#drafts.push({ ...draft, inputs: { ...inputs }, from })
@@ -108,9 +122,14 @@ export class Recorder implements Trace {
 
   /**
    * The derivation of a finished check: only the steps that its three results rest on, in an order in which
-   * every step follows its inputs, the results last.
+   * every step follows its inputs, the results last. `alsoShown` are further values whose derivation is kept.
    */
-  steps(required: number | null, available: number | null, margin: number | null): readonly Step[] {
+  steps(
+    required: number | null,
+    available: number | null,
+    margin: number | null,
+    alsoShown: readonly number[] = [],
+  ): readonly Step[] {
     const ends = new Map<number, NonNullable<Step['yields']>>()
     const mark = (value: number | null, role: NonNullable<Step['yields']>): void => {
       if (value !== null) ends.set(this.#find(role, value), role)
@@ -118,17 +137,18 @@ export class Recorder implements Trace {
     mark(required, 'required')
     mark(available, 'available')
     mark(margin, 'margin')
-    return this.#number(this.#ordered(ends), ends)
+    const shown = [...this.#shown, ...alsoShown].map((value) => this.#find('', value))
+    return this.#number(this.#ordered(ends, shown), ends)
   }
 
-  #ordered(ends: ReadonlyMap<number, string>): readonly number[] {
+  #ordered(ends: ReadonlyMap<number, string>, shown: readonly number[]): readonly number[] {
     const kept = new Set<number>()
     const keep = (k: number): void => {
       if (kept.has(k)) return
       kept.add(k)
       for (const source of Object.values(this.#drafts[k]!.from)) keep(source)
     }
-    for (const k of ends.keys()) keep(k)
+    for (const k of [...ends.keys(), ...shown]) keep(k)
     const inner = [...kept].filter((k) => !ends.has(k))
     const needsEnd = inner.some((k) =>
       Object.values(this.#drafts[k]!.from).some((source) => ends.has(source)),
@@ -147,4 +167,16 @@ export class Recorder implements Trace {
       return { ...draft, id: ids.get(k)!, from, ...(role === undefined ? {} : { yields: role }) }
     })
   }
+}
+
+/** True when a step was already written down: the same expression over the same numbers. */
+function same(
+  known: Draft,
+  draft: Omit<Draft, 'from' | 'inputs'>,
+  inputs: Readonly<Record<string, number>>,
+): boolean {
+  if (!Object.is(known.value, draft.value)) return false
+  if (known.symbol !== draft.symbol || known.formula !== draft.formula) return false
+  if (known.kind !== draft.kind || known.path !== draft.path || known.meaning !== draft.meaning) return false
+  return Object.entries(inputs).every(([name, value]) => Object.is(known.inputs[name], value))
 }

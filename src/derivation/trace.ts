@@ -25,6 +25,11 @@ export interface Searched extends About {
   readonly tolerance: string
 }
 
+/** An arithmetic expression that a user gave, in mathjs notation. */
+export interface UserExpression extends About {
+  readonly text: string
+}
+
 /** A named numeric procedure such as an integral or a scan, with its method and its error. */
 export interface Procedure extends About {
   readonly method: string
@@ -42,8 +47,12 @@ export interface Trace {
   leaf(about: Given, value: number): number
   /** Notes the root of a search; `inputs` are the numbers the residual depends on. */
   search(about: Searched, value: number, inputs?: Readonly<Record<string, number>>): number
+  /** Notes the value of an expression that a user gave; `inputs` are all its symbols. */
+  expression(about: UserExpression, value: number, inputs: Readonly<Record<string, number>>): number
   /** Notes the result of a numeric procedure; `inputs` are the numbers it was given. */
   kernel(about: Procedure, value: number, inputs?: Readonly<Record<string, number>>): number
+  /** Keeps the derivation of a value that shows a search was solved, though no result rests on it. */
+  show(value: number): void
   /** True when steps are being written down: lets callers build `inputs` only then. */
   readonly recording: boolean
 }
@@ -74,9 +83,13 @@ class PlainTrace implements Trace {
   search(_about: Searched, value: number): number {
     return value
   }
+  expression(_about: UserExpression, value: number): number {
+    return value
+  }
   kernel(_about: Procedure, value: number): number {
     return value
   }
+  show(): void {}
 }
 
 /** The trace of the hot path. It holds no state, so one serves everybody. */

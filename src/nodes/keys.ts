@@ -178,7 +178,7 @@ export const nodeKeys = {
   supply: group('Supplies.', {
     core: quantity({
       meaning: 'Nominal core supply.',
-      symbol: 'V_core',
+      symbol: 'V_nom',
       unit: 'V',
       min: 0.3,
       max: 5,

@@ -15,7 +15,11 @@ export function bracketedRoot(f: (x: number) => number, a: number, b: number, re
   return rootBetween(f, a, f(a), b, f(b), relative)
 }
 
-/** As {@link bracketedRoot}, for callers that already know the values at the ends. */
+/**
+ * As {@link bracketedRoot}, for callers that already know the values at the ends. `simple` promises that f crosses
+ * zero with a slope and is smooth or a smaller of smooth functions: the search then ends as soon as the next
+ * correction is below the tolerance, without the steps that would close the bracket from the other side.
+ */
 export function rootBetween(
   f: (x: number) => number,
   a: number,
@@ -23,13 +27,15 @@ export function rootBetween(
   b: number,
   fb: number,
   relative = 1e-9,
+  simple = false,
 ): number {
   if (fa === 0) return a
   if (fb === 0) return b
   if (fa < 0 === fb < 0 || Number.isNaN(fa) || Number.isNaN(fb)) return Number.NaN
   let [x1, f1, x2, f2] = [b, fb, a, fa]
   let [x3, f3] = [x1, f1]
-  let t = 0.5
+  // Most functions here are nearly straight: the secant is a better first guess than the middle.
+  let t = Math.min(0.9, Math.max(0.1, f1 / (f1 - f2)))
   for (let k = 0; k < 200; k++) {
     const x = x1 + t * (x2 - x1)
     const fx = f(x)
@@ -47,7 +53,9 @@ export function rootBetween(
     const best = Math.abs(f1) < Math.abs(f2) ? x1 : x2
     const limit = (0.5 * relative * Math.abs(best)) / Math.abs(x2 - x1)
     if (f1 === 0 || limit > 0.5) return best
-    t = Math.min(1 - limit, Math.max(limit, nextShare(x1, f1, x2, f2, x3, f3)))
+    const next = nextShare(x1, f1, x2, f2, x3, f3)
+    if (simple && next <= 2 * limit) return x1 + next * (x2 - x1)
+    t = Math.min(1 - limit, Math.max(limit, next))
   }
   return x1
 }

@@ -1,5 +1,6 @@
 import type { Fault } from './fault.ts'
 import type { ScenarioHead, Settings } from './keys/index.ts'
+import type { UserRule } from './rule-formula.ts'
 
 /** Split normal: 5th, 50th and 95th percentile, in SI. */
 export interface Spread {
@@ -31,6 +32,8 @@ export interface OptionInput {
   readonly label: string
   readonly settings: Settings
   readonly provenance: readonly Provenance[]
+  /** Rules of thumb given as formulas, compiled, by sub-block. */
+  readonly rules: Readonly<Partial<Record<string, UserRule>>>
 }
 
 /** A checked scenario: everything in SI, every fault already reported. */

@@ -104,18 +104,17 @@ export interface SectionKey<G extends Keys> extends KeyAbout {
   readonly keys: G
 }
 
-// biome-ignore lint/suspicious/noExplicitAny: the recursive bound of a declaration needs it
 export type Key =
   | QuantityKey
   | RangeKey
   | CountKey
-  | ChoiceKey<any>
+  | ChoiceKey<string>
   | TextKey
   | ListKey
   | TableKey
   | RowsKey
-  | GroupKey<any>
-  | SectionKey<any>
+  | GroupKey<Keys>
+  | SectionKey<Keys>
 export interface Keys {
   readonly [name: string]: Key
 }

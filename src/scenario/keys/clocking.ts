@@ -188,12 +188,13 @@ export const divider = group('The first divider after the oscillator.', {
     usedBy: ['divider'],
   }),
   fan_out: quantity({
-    meaning: 'Load on the divider output in multiples of a latch input.',
+    meaning:
+      'Load on the divider output in multiples of a latch input; 0 when the two latches load only each other.',
     symbol: 'phi_o',
     unit: '1',
     min: 0,
     max: 8,
-    default: '1',
+    default: '0',
     source: COMMON,
     usedBy: ['divider'],
   }),

@@ -1,0 +1,142 @@
+import { formula } from '../derivation/formula.ts'
+import type { Trace } from '../derivation/trace.ts'
+import { type DeviceHere, deviceAt, type OperatingPoint, typicalPoint } from '../device/conditions.ts'
+import { speedAt } from '../device/speed.ts'
+import type { DeviceValues, NodeValues } from '../nodes/keys.ts'
+import type { Settings } from '../scenario/keys/index.ts'
+import type { UserRule } from '../scenario/rule-formula.ts'
+import { type Rates, ratesOf } from './rates.ts'
+
+/** One case: an option in a node. Nothing in it depends on the operating point. */
+export interface Case {
+  readonly block: 'link' | 'clock'
+  readonly settings: Settings
+  readonly node: NodeValues
+  readonly rules: Readonly<Partial<Record<string, UserRule>>>
+}
+
+/** The supply and the transistor of the stacked stages, or why there is none. */
+export type StackSupply =
+  | { readonly device: DeviceHere; readonly V: number; readonly V_high: number; readonly missing?: never }
+  | { readonly missing: string }
+
+/** A case at one operating point: what every sub-block measures itself on. SI. */
+export interface Bench extends Case {
+  readonly at: OperatingPoint
+  readonly t: Trace
+  readonly rates: Rates
+  readonly nmos: DeviceHere
+  readonly pmos: DeviceHere
+  /** Lowest core supply [V]. */
+  readonly V_core: number
+  /** Stacked stages: device, lowest and highest supply. */
+  readonly stack: StackSupply
+  readonly guard: number
+  /** The node's intrinsic peak f_T (typical, 300 K), what rules of thumb are measured on [Hz]. */
+  readonly peak: number
+}
+
+/** V = V_nom (1 − tol_V) − V_do − V_ir. V_nom [V], tol_V [1], V_do [V] dropout, V_ir [V] wiring → [V]. */
+export const lowestSupplyVoltage = formula(
+  { symbol: 'V', meaning: 'lowest supply of the case', unit: 'V', source: 'definition' },
+  (V_nom, tol_V, V_do, V_ir) => V_nom * (1 - tol_V) - V_do - V_ir,
+)
+
+/** V_core = V_nom (1 − tol_V) − V_ir. V_nom [V] core, tol_V [1], V_ir [V] wiring → [V]. */
+export const lowestCoreVoltage = formula(
+  { symbol: 'V_core', meaning: 'lowest core supply of the case', unit: 'V', source: 'definition' },
+  (V_nom, tol_V, V_ir) => V_nom * (1 - tol_V) - V_ir,
+)
+
+/** V_high = V_nom (1 + tol_V). V_nom [V], tol_V [1] → [V]. */
+export const highestSupplyVoltage = formula(
+  { symbol: 'V_high', meaning: 'highest supply of the case', unit: 'V', source: 'definition' },
+  (V_nom, tol_V) => V_nom * (1 + tol_V),
+)
+
+/**
+ * Sets a case up at one operating point.
+ *
+ * @param given option and node, SI
+ * @param at corner, temperature [K], shifts [V], supply tolerance [1]
+ * @param t trace
+ */
+export function benchAt(given: Case, at: OperatingPoint, t: Trace): Bench {
+  const { settings, node } = given
+  const nmos = deviceAt(node.nmos, at, t)
+  const V_core = t.calc(
+    lowestCoreVoltage,
+    settings.supply.core_voltage ?? node.supply.core,
+    at.tol_V,
+    settings.supply.ir_drop,
+  )
+  return {
+    block: given.block,
+    settings,
+    node,
+    rules: given.rules,
+    at,
+    t,
+    rates: ratesOf(given, t),
+    nmos,
+    pmos: deviceAt(node.pmos, at, t),
+    V_core,
+    stack: stackSupply(given, at, nmos, t),
+    guard: settings.guard,
+    peak: peakTransitFrequency(node, t),
+  }
+}
+
+function stackSupply(given: Case, at: OperatingPoint, nmos: DeviceHere, t: Trace): StackSupply {
+  const { settings, node } = given
+  const chosen = nominalStackSupply(settings, node)
+  if ('missing' in chosen) return chosen
+  const { regulator_dropout, ir_drop } = settings.supply
+  return {
+    device: chosen.device === node.nmos ? nmos : deviceAt(chosen.device, at, t),
+    V: t.calc(lowestSupplyVoltage, chosen.V_nom, at.tol_V, regulator_dropout, ir_drop),
+    V_high: t.calc(highestSupplyVoltage, chosen.V_nom, at.tol_V),
+  }
+}
+
+/** Which supply and which transistor the stacked stages use, or why they have none. */
+export function nominalStackSupply(
+  settings: Settings,
+  node: NodeValues,
+): { readonly V_nom: number; readonly device: DeviceValues } | { readonly missing: string } {
+  const { use, voltage, core_voltage } = settings.supply
+  const core = core_voltage ?? node.supply.core
+  if (use === 'io') {
+    if (node.thick === null) return { missing: 'the node states no thick-oxide device for the io supply' }
+    const V_nom = voltage ?? node.supply.io
+    return V_nom === null ? { missing: 'the node states no io supply' } : { V_nom, device: node.thick }
+  }
+  if (use === 'analogue' && voltage === null && node.supply.analogue === null) {
+    return { missing: 'the node offers no analogue supply and the scenario states no voltage' }
+  }
+  if (use === 'core') return { V_nom: voltage ?? core, device: node.nmos }
+  return { V_nom: voltage ?? node.supply.analogue ?? core, device: node.nmos }
+}
+
+/** J_best = min(J_peak, J_max). J_peak [A/m], J_max [A/m] → [A/m]. */
+export const bestDensity = formula(
+  {
+    symbol: 'J_best',
+    meaning: 'current per width at the published peak, inside the admissible one',
+    unit: 'A/m',
+    source: 'the modelled f_T has no roll-off at high current, so the published density of the peak is taken',
+  },
+  (J_peak, J_max) => Math.min(J_peak, J_max),
+)
+
+/**
+ * The node's intrinsic peak f_T: typical corner, 300 K, blind to headroom. What rules of thumb are measured on.
+ *
+ * @returns f_T,int [Hz] at the smaller of the published peak density and J_max
+ */
+export function peakTransitFrequency(node: NodeValues, t: Trace): number {
+  const device = deviceAt(node.nmos, TYPICAL_300K, t)
+  return speedAt(device, t.calc(bestDensity, node.nmos.J_peak, node.nmos.J_max), t).f_T_int
+}
+
+const TYPICAL_300K = typicalPoint(300)

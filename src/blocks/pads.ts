@@ -1,0 +1,158 @@
+import { marginAtLeast, marginInDecibel } from '../derivation/margin.ts'
+import type { Bench } from './bench.ts'
+import { currentModeDriver, driverSize } from './current-mode-driver.ts'
+import {
+  bodeFano,
+  extensionFactor,
+  fixedCapacitance,
+  padBandwidth,
+  padCapacitance,
+  receiverShare,
+  worstReturnLoss,
+} from './pad-network.ts'
+import { seriesDriver } from './source-series-driver.ts'
+import {
+  type AnySubBlock,
+  ASKED,
+  type NamedResult,
+  type Outcome,
+  subBlock,
+  type Unprepared,
+} from './sub-block.ts'
+
+type End = 'transmit' | 'receive'
+
+interface Pad {
+  readonly C_pad: number
+  readonly x_ext: number
+  /** What the capacitance rests on, in words. */
+  readonly basis: string
+}
+
+const BUMP = { 'flip-chip': 'flip_chip', 'micro-bump': 'micro_bump', 'wire-bond': 'wire_bond' } as const
+
+function prepare(end: End, bench: Bench): Pad | Unprepared {
+  const { settings, node, t } = bench
+  const { cdm_current, bump, extension, transmit_capacitance, receive_capacitance } = settings.pads
+  const x_ext = extensionFactor(extension, t)
+  const stated = end === 'transmit' ? transmit_capacitance : receive_capacitance
+  if (stated !== null) return { C_pad: stated, x_ext, basis: 'stated pad capacitance' }
+  const C_fix = t.calc(fixedCapacitance, node.pads.esd, cdm_current, node.pads[BUMP[bump]])
+  const device =
+    end === 'transmit'
+      ? driverDrain(bench)
+      : { C: t.calc(receiverShare, C_fix), basis: 'input devices a tenth of protection and bump' }
+  if ('unknown' in device) return device
+  return {
+    C_pad: t.calc(padCapacitance, C_fix, device.C),
+    x_ext,
+    basis: `protection, bump and devices (${device.basis})`,
+  }
+}
+
+interface Drain {
+  readonly C: number
+  readonly basis: string
+}
+
+/** What the driver hangs on its pad [F]. */
+function driverDrain(bench: Bench): Drain | Unprepared {
+  const { stack, settings } = bench
+  if (settings.transmitter.kind === 'source-series') {
+    return { C: seriesDriver(bench).C_drain, basis: 'slices of the driver' }
+  }
+  if (stack.missing !== undefined) return { unknown: stack.missing }
+  const { C_drain, operates } = driverSize(currentModeDriver(bench, stack).speed, stack, bench)
+  const basis = operates
+    ? 'driver at its design point'
+    : 'driver without operating point, sized at the largest admissible current per width'
+  return { C: C_drain, basis }
+}
+
+function bandwidthOutcome({ C_pad, x_ext, basis }: Pad, { settings, rates, t }: Bench): Outcome {
+  const required = rates.f_N!
+  const available = t.calc(padBandwidth, x_ext, settings.transmitter.termination, C_pad)
+  return { required, available, margin: t.calc(marginAtLeast, available, required), basis }
+}
+
+function returnLossOutcome({ C_pad, x_ext, basis }: Pad, { settings, t }: Bench): Outcome {
+  const { termination, termination_tolerance } = settings.transmitter
+  const { at_least, at } = settings.pads.return_loss!
+  const available = worstReturnLoss(termination, termination_tolerance, at, C_pad, x_ext, t)
+  const limit = t.calc(bodeFano, at, termination, C_pad)
+  const beyond = `no lossless network holds more than ${limit.toFixed(1)} dB up to that frequency on this capacitance`
+  return {
+    required: at_least,
+    available,
+    margin: t.calc(marginInDecibel, available, at_least),
+    basis: `${basis}; worse end of the termination`,
+    ...(limit < at_least ? { reason: beyond } : {}),
+    alsoShown: t.recording ? [limit] : [],
+  }
+}
+
+function results(
+  end: End,
+  { C_pad, x_ext, basis }: Pad,
+  { settings, rates, t }: Bench,
+): readonly NamedResult[] {
+  const { termination: R0, termination_tolerance } = settings.transmitter
+  const at = settings.pads.return_loss?.at ?? rates.f_N!
+  const named = (name: string, value: number, unit: string, reason?: string): NamedResult => ({
+    name: `pad.${end}.${name}`,
+    value,
+    unit,
+    ...(reason === undefined ? {} : { reason }),
+  })
+  return [
+    named('bandwidth_Hz', t.calc(padBandwidth, x_ext, R0, C_pad), 'Hz'),
+    named('capacitance_F', C_pad, 'F', basis),
+    named(
+      'return_loss_dB',
+      worstReturnLoss(R0, termination_tolerance, at, C_pad, x_ext, t),
+      'dB',
+      `at ${(at / 1e9).toFixed(2)} GHz`,
+    ),
+    named(
+      'return_loss_limit_dB',
+      t.calc(bodeFano, at, R0, C_pad),
+      'dB',
+      'Bode and Fano, up to that frequency',
+    ),
+  ]
+}
+
+function pad(end: End, title: string): AnySubBlock {
+  return subBlock<Pad>({
+    id: `${end}_pad`,
+    title,
+    of: ['link'],
+    asked: () => ASKED,
+    prepare: (bench) => prepare(end, bench),
+    checks: [
+      {
+        name: 'bandwidth',
+        title: `${title}: bandwidth`,
+        quantity: 'bandwidth of the terminated pad',
+        unit: 'Hz',
+        sense: 'at least',
+        evaluate: bandwidthOutcome,
+      },
+      {
+        name: 'return_loss',
+        title: `${title}: return loss`,
+        quantity: 'return loss',
+        unit: 'dB',
+        sense: 'at least',
+        asked: ({ settings }) => settings.pads.return_loss !== null,
+        evaluate: returnLossOutcome,
+      },
+    ],
+    results: (state, bench) => results(end, state, bench),
+  })
+}
+
+/** The transmit pad: protection, bump and the driver's drain on a doubly terminated line. */
+export const transmitPad = pad('transmit', 'Transmit pad')
+/** The receive pad: protection, bump and a small share of devices on a doubly terminated line. */
+export const receivePad = pad('receive', 'Receive pad')

@@ -1,0 +1,33 @@
+import type { DeviceHere } from '../conditions.ts'
+import { speedAt } from '../speed.ts'
+import { NO_LINE, type Stage } from '../stage.ts'
+import { gateVoltageAt } from '../voltage.ts'
+import { followerInput } from './lines.ts'
+
+/** A source follower: device, tail voltage, full single-ended swing and reserve, all in V. */
+export interface Follower {
+  readonly device: DeviceHere
+  readonly V_tail: number
+  readonly V_swing: number
+  readonly V_m: number
+}
+
+/**
+ * A source follower such as the buffer behind a track-and-hold; its highest input is the supply.
+ *
+ * @param follower device, tail voltage [V], full swing [V], reserve [V]
+ * @returns the stage: supply it needs [V], speed f_T,int at J [Hz]
+ */
+export function sourceFollower({ device, V_tail, V_swing, V_m }: Follower): Stage {
+  return {
+    J_low: 0.01 * (device.I_spec / device.of.L),
+    J_lim: device.J_lim,
+    ownSwing: V_swing,
+    supplyNeeded: (J, t) => t.calc(followerInput, gateVoltageAt(device, J, V_tail, t), V_tail, V_swing, V_m),
+    bindingAt: () => 'follower',
+    swingSpare: NO_LINE,
+    ownSpare: NO_LINE,
+    speed: (J, t) => speedAt(device, J, t).f_T_int,
+    givens: { V_tail, V_m },
+  }
+}

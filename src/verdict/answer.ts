@@ -1,0 +1,95 @@
+import type { Node } from '../nodes/node.ts'
+import type { OptionInput } from '../scenario/checked.ts'
+import type { Answer, CaseResult, Verdict } from './result.ts'
+import { caseVerdict } from './verdict.ts'
+
+/** The answer in two or three sentences, and the cases by verdict. */
+export function answerOf(
+  cases: readonly CaseResult[],
+  options: readonly Pick<OptionInput, 'id' | 'label'>[],
+  nodes: readonly Pick<Node, 'id'>[],
+): Answer {
+  const named = (verdict: Verdict): readonly string[] =>
+    cases.filter((one) => one.verdict === verdict).map(({ option, node }) => `${option} in ${node}`)
+  const sentence = [
+    headline(cases, options),
+    ...options.map((option) => optionSentence(option, cases, nodes)),
+    unknownSentence(cases),
+  ]
+    .filter((part) => part !== '')
+    .join(' ')
+  return {
+    sentence,
+    passes: named('pass'),
+    tight: named('tight'),
+    fails: named('fail'),
+    unknown: named('unknown'),
+  }
+}
+
+function headline(cases: readonly CaseResult[], options: readonly { readonly id: string }[]): string {
+  const count = (verdict: Verdict): number => cases.filter((one) => one.verdict === verdict).length
+  const parts = [
+    [count('pass'), 'pass'],
+    [count('tight'), 'are tight'],
+    [count('fail'), 'fail'],
+    [count('unknown'), 'cannot be decided yet'],
+  ] as const
+  const said = parts
+    .filter(([many]) => many > 0)
+    .map(([many, what]) => `${many} ${many === 1 ? singular(what) : what}`)
+  const what = options.length === 1 ? 'nodes' : 'combinations of option and node'
+  return `Of ${cases.length} ${what}, ${listed(said)}.`
+}
+
+const singular = (what: string): string =>
+  ({
+    pass: 'passes',
+    'are tight': 'is tight',
+    fail: 'fails',
+    'cannot be decided yet': 'cannot be decided yet',
+  })[what] ?? what
+
+/** Verdict of what could be computed: what a case would be without its unknown checks. */
+function computedVerdict(one: CaseResult): Verdict {
+  return caseVerdict(one.checks.filter(({ verdict }) => verdict !== 'unknown'))
+}
+
+/** Where one option works, or what stops it where it comes closest. */
+function optionSentence(
+  option: { readonly id: string },
+  cases: readonly CaseResult[],
+  nodes: readonly { readonly id: string }[],
+): string {
+  const own = nodes.flatMap(({ id }) => cases.filter((one) => one.option === option.id && one.node === id))
+  const inNodes = (verdict: Verdict): readonly string[] =>
+    own.filter((one) => computedVerdict(one) === verdict).map(({ node }) => node)
+  const [passes, tight] = [inNodes('pass'), inNodes('tight')]
+  const open = own.some(({ verdict }) => verdict === 'unknown') ? ' as far as computed' : ''
+  if (passes.length > 0) {
+    return `${option.id} passes${open} in ${listed(passes)}${tight.length > 0 ? ` and is tight in ${listed(tight)}` : ''}.`
+  }
+  if (tight.length > 0) return `${option.id} is tight${open} in ${listed(tight)}.`
+  const known = own.filter((one) => one.margin !== null)
+  if (known.length === 0) return `${option.id} has no computed check.`
+  const best = known.reduce((a, b) => (b.margin! > a.margin! ? b : a))
+  const limit = best.checks.find(({ id }) => id === best.limitedBy)
+  const where =
+    own.length === 1 ? `fails in ${best.node}` : `fails in every node; it comes closest in ${best.node}`
+  return `${option.id} ${where}, limited by ${limit?.title ?? 'an unknown check'} (margin ${best.margin!.toFixed(2)}).`
+}
+
+function unknownSentence(cases: readonly CaseResult[]): string {
+  const asked = new Set(
+    cases.flatMap(({ checks }) =>
+      checks.filter(({ verdict }) => verdict === 'unknown').map(({ title }) => title),
+    ),
+  )
+  return asked.size === 0 ? '' : `Asked but unknown: ${listed([...asked])}.`
+}
+
+/** "a", "a and b", "a, b and c". */
+export function listed(parts: readonly string[]): string {
+  if (parts.length <= 1) return parts[0] ?? ''
+  return `${parts.slice(0, -1).join(', ')} and ${parts.at(-1)}`
+}

@@ -1,0 +1,149 @@
+import type { Case } from '../blocks/bench.ts'
+import type { CheckResult, NamedValue, NotExamined } from './result.ts'
+
+/** What a scenario can ask and this version does not compute yet: unknown, never silence. */
+interface Later {
+  readonly subBlock: string
+  readonly name: string
+  readonly title: string
+  readonly quantity: string
+  readonly unit: string
+  readonly sense: 'at least' | 'at most'
+  readonly asked: (given: Case) => boolean
+  /** Said when it is not asked. */
+  readonly otherwise: string
+  /** Names of the results that stay without a value. */
+  readonly results: readonly (readonly [string, string])[]
+}
+
+const NOT_YET = 'not evaluated in this version'
+
+const LATER: readonly Later[] = [
+  {
+    subBlock: 'loop',
+    name: 'jitter',
+    title: 'Clock: random jitter of the loop',
+    quantity: 'rms jitter',
+    unit: 's',
+    sense: 'at most',
+    asked: ({ settings }) => settings.loop !== null,
+    otherwise: 'the scenario states no loop',
+    results: [
+      ['clock.loop.bandwidth_Hz', 'Hz'],
+      ['clock.jitter.rms_s', 's'],
+      ['clock.jitter.tracked_rms_s', 's'],
+      ['clock.phaseNoise.at_1MHz_dBc_Hz', 'dBc/Hz'],
+    ],
+  },
+  {
+    subBlock: 'loop',
+    name: 'lock_time',
+    title: 'Clock: lock time',
+    quantity: 'time to lock',
+    unit: 's',
+    sense: 'at most',
+    asked: ({ settings }) => settings.loop?.lock_time != null,
+    otherwise: 'the scenario states no lock time',
+    results: [],
+  },
+  {
+    subBlock: 'jitter',
+    name: 'budget',
+    title: 'Jitter budget',
+    quantity: 'total jitter',
+    unit: 'UI',
+    sense: 'at most',
+    asked: ({ settings }) => settings.jitter_budget !== null,
+    otherwise: 'the scenario states no jitter budget',
+    results: [
+      ['jitter.random_rms_s', 's'],
+      ['jitter.bounded_pp_s', 's'],
+      ['jitter.total_UI', 'UI'],
+    ],
+  },
+  {
+    subBlock: 'link',
+    name: 'margin',
+    title: 'Link: operating margin over the channel',
+    quantity: 'channel operating margin',
+    unit: 'dB',
+    sense: 'at least',
+    asked: ({ block, settings }) => block === 'link' && settings.channel !== null,
+    otherwise: 'the scenario states no channel',
+    results: [
+      ['link.loss_nyquist_dB', 'dB'],
+      ['link.bound.matchedFilter_dB', 'dB'],
+      ['link.bound.salz_dB', 'dB'],
+      ['link.slicer.snr_dB', 'dB'],
+      ['link.slicer.required_dB', 'dB'],
+      ['link.operatingMargin_dB', 'dB'],
+      ['link.eye.height_V', 'V'],
+      ['link.eye.width_UI', 'UI'],
+    ],
+  },
+  {
+    subBlock: 'fec',
+    name: 'codeword',
+    title: 'Error correction: codeword error ratio',
+    quantity: 'codeword error ratio',
+    unit: '1',
+    sense: 'at most',
+    asked: ({ block, settings }) => block === 'link' && settings.fec !== null,
+    otherwise: 'the scenario states no error-correcting code',
+    results: [],
+  },
+  {
+    subBlock: 'power',
+    name: 'total',
+    title: 'Power',
+    quantity: 'power',
+    unit: 'W',
+    sense: 'at most',
+    asked: ({ settings }) => settings.power_budget !== null,
+    otherwise: 'the scenario states no power budget',
+    results: [
+      ['power.total_W', 'W'],
+      ['power.energy_J_per_bit', 'J/bit'],
+    ],
+  },
+]
+
+/** Checks that were asked but wait for a later version, as unknown. */
+export function laterChecks(given: Case): readonly CheckResult[] {
+  return LATER.filter((later) => later.asked(given)).map(
+    ({ subBlock, name, title, quantity, unit, sense }) => ({
+      id: `${subBlock}.${name}`,
+      subBlock,
+      title,
+      quantity,
+      required: null,
+      available: null,
+      unit,
+      sense,
+      margin: null,
+      typicalMargin: null,
+      verdict: 'unknown',
+      operatingPoint: null,
+      basis: 'not computed',
+      reason: NOT_YET,
+      steps: [],
+    }),
+  )
+}
+
+/** Results that were asked but wait for a later version: null with the reason. */
+export function laterResults(given: Case): Readonly<Record<string, NamedValue>> {
+  const asked = LATER.filter((later) => later.asked(given))
+  return Object.fromEntries(
+    asked.flatMap(({ results }) =>
+      results.map(([name, unit]) => [name, { value: null, unit, reason: NOT_YET }]),
+    ),
+  )
+}
+
+/** What was not asked of these, for the list of what was not examined. A clock block has no link or code. */
+export function laterNotExamined(given: Case): readonly NotExamined[] {
+  return LATER.filter((later) => !later.asked(given))
+    .filter(({ subBlock }) => given.block === 'link' || (subBlock !== 'link' && subBlock !== 'fec'))
+    .map(({ subBlock, title, otherwise }) => ({ subBlock, title, reason: otherwise }))
+}

@@ -1,0 +1,47 @@
+import type { KnownLeaf } from '../derivation/recorder.ts'
+import { BOLTZMANN, CHARGE, type OperatingPoint } from '../device/conditions.ts'
+import type { Provenance } from '../scenario/checked.ts'
+
+/** Given numbers that a derivation may rest on: the option's, the node's, the operating point's and constants. */
+export function knownLeaves(
+  option: readonly Provenance[],
+  node: readonly Provenance[],
+  at: OperatingPoint,
+): readonly KnownLeaf[] {
+  return [...[...option, ...node].flatMap(leavesOf), ...pointLeaves(at), BOLTZMANN, CHARGE]
+}
+
+function leavesOf(given: Provenance): readonly KnownLeaf[] {
+  const { path, meaning, unit, source, value } = given
+  const symbol = given.symbol === '' ? (path.split('.').at(-1) ?? path) : given.symbol
+  if (typeof value === 'number') return [{ symbol, meaning, unit, source, path, value }]
+  if (!Array.isArray(value) || value.length !== 2 || typeof value[0] !== 'number') return []
+  const [least, most] = value as [number, number]
+  return [
+    { symbol: `${symbol}_min`, meaning: `${meaning} (low end)`, unit, source, path, value: least },
+    { symbol: `${symbol}_max`, meaning: `${meaning} (high end)`, unit, source, path, value: most },
+  ]
+}
+
+function pointLeaves(at: OperatingPoint): readonly KnownLeaf[] {
+  const source = `operating point: ${at.corner} corner`
+  const leaf = (symbol: string, meaning: string, unit: string, value: number): KnownLeaf => ({
+    symbol,
+    meaning,
+    unit,
+    source,
+    value,
+  })
+  return [
+    leaf('T', 'junction temperature', 'K', at.T),
+    leaf('c_mu', 'mobility factor of the corner', '1', at.c_mu),
+    leaf('dV_T', 'threshold shift of the corner', 'V', at.dV_T),
+    leaf('dV_age', 'threshold shift by ageing', 'V', at.dV_age),
+    leaf('tol_V', 'supply tolerance taken', '1', at.tol_V),
+    // The rule of thumb is measured on the typical device at 300 K without ageing.
+    leaf('T', 'temperature of published device data', 'K', 300),
+    leaf('c_mu', 'mobility factor of the typical corner', '1', 1),
+    leaf('dV_T', 'threshold shift of the typical corner', 'V', 0),
+    leaf('dV_age', 'no ageing', 'V', 0),
+  ]
+}
