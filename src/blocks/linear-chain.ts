@@ -125,9 +125,17 @@ export const reachableBoost = formula(
   (n_st) => 12 * n_st,
 )
 
+const STATED_BOOST = {
+  symbol: 'required',
+  meaning: 'stated boost',
+  unit: 'dB',
+  source: 'scenario',
+  path: 'receiver.ctle.boost',
+}
+
 /** Whether the stages reach the stated boost, and what gain it leaves at low frequency. */
 export function boostOutcome({ A, n_st, degeneration }: LinearChain, { settings, t }: Bench): Outcome {
-  const required = settings.receiver.ctle!.boost!
+  const required = t.leaf(STATED_BOOST, settings.receiver.ctle!.boost!)
   const available = t.calc(reachableBoost, n_st)
   const A_low = t.calc(lowFrequencyGain, A, degeneration)
   return {

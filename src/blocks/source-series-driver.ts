@@ -152,9 +152,17 @@ export function symbolOutcome(bench: Bench): Outcome {
   }
 }
 
+const STATED_SWING = {
+  symbol: 'required',
+  meaning: 'stated output swing',
+  unit: 'V',
+  source: 'scenario',
+  path: 'transmitter.swing',
+}
+
 /** Matched at both ends, the differential peak-to-peak output cannot exceed the supply. */
 export function swingOutcome({ settings, V_core, t }: Bench): Outcome {
-  const required = settings.transmitter.swing
+  const required = t.leaf(STATED_SWING, settings.transmitter.swing)
   return {
     required,
     available: V_core,

@@ -55,11 +55,11 @@ export const inverterLayoutShare = formula(
   (C_lay_n, r_w, C_lay_p, C_n, C_p) => (C_lay_n + r_w * C_lay_p) / (C_n + r_w * C_p),
 )
 
-/** A_0 = (g_mn + r g_mp)/(J_n/(V_En L_n) + J_n/(V_Ep L_p)). g_mn [S/m], r_w [1], g_mp [S/m], J_n [A/m], V_En [V/m], L_n [m], V_Ep [V/m], L_p [m] → [1]. */
+/** A_0 = (g_mn + r g_mp)/(J_n/(V_E_n L_n) + J_n/(V_E_p L_p)). g_mn [S/m], r_w [1], g_mp [S/m], J_n [A/m], V_E_n [V/m], L_n [m], V_E_p [V/m], L_p [m] → [1]. */
 export const inverterSelfGain = formula(
   { symbol: 'A_0', meaning: 'self-gain of the complementary pair', unit: '1', source: SHARED },
-  (g_mn, r_w, g_mp, J_n, V_En, L_n, V_Ep, L_p) =>
-    (g_mn + r_w * g_mp) / (J_n / (V_En * L_n) + J_n / (V_Ep * L_p)),
+  (g_mn, r_w, g_mp, J_n, V_E_n, L_n, V_E_p, L_p) =>
+    (g_mn + r_w * g_mp) / (J_n / (V_E_n * L_n) + J_n / (V_E_p * L_p)),
 )
 
 /** An nMOS and a pMOS biased at half their supply. SI. */

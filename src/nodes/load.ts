@@ -1,4 +1,5 @@
 import type { Outcome, Scenario } from '../scenario/checked.ts'
+import { inOrder } from '../scenario/fault.ts'
 import { readScenarioParts } from '../scenario/read.ts'
 import type { Access } from '../scenario/tree.ts'
 import type { Node } from './node.ts'
@@ -15,7 +16,7 @@ export interface Loaded {
 export async function loadScenario(text: string, file: string, access: Access): Promise<Outcome<Loaded>> {
   const { scenario, nodeNames, faults } = await readScenarioParts(text, file, access)
   const found = resolveNodes(nodeNames, file, access)
-  const all = [...faults, ...(found.ok ? [] : found.faults)]
+  const all = inOrder([...faults, ...(found.ok ? [] : found.faults)])
   if (scenario === null || !found.ok || all.length > 0) return { ok: false, faults: all }
   return {
     ok: true,

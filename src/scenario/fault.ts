@@ -37,6 +37,23 @@ export function faultAt(
   return { code, ...place, found: shortened(found), allowed, remedy }
 }
 
+/**
+ * Faults in the order of the text, file after file as each first appears. What several options or nodes share is
+ * found once for each of them, and told once.
+ */
+export function inOrder(faults: readonly Fault[]): readonly Fault[] {
+  const seen = new Set<string>()
+  const unique = faults.filter(({ code, file, line, column, found }) => {
+    const key = [code, file, line, column, found].join('\u0000')
+    return seen.has(key) ? false : seen.add(key)
+  })
+  const files = [...new Set(unique.map(({ file }) => file))]
+  const rank = new Map(files.map((file, k) => [file, k]))
+  return unique.sort(
+    (a, b) => rank.get(a.file)! - rank.get(b.file)! || a.line - b.line || a.column - b.column,
+  )
+}
+
 /** Long findings are cut so that a message stays a message. */
 function shortened(text: string): string {
   const plain = text.replace(/\s+/g, ' ').trim() || 'nothing'

@@ -1,5 +1,5 @@
 import { type Fault, faultAt, type Place } from './fault.ts'
-import { type Access, laidOver, type MapTree, type Tree, without } from './tree.ts'
+import { type Access, inWords, laidOver, type MapTree, type Tree, without } from './tree.ts'
 import { yamlTree } from './yaml-tree.ts'
 
 const LONGEST_CHAIN = 16
@@ -24,7 +24,7 @@ export function withIncludes(
       faultAt(
         read.tree.place,
         'shape.mapping',
-        `a ${read.tree.kind}`,
+        inWords(read.tree),
         'a mapping of keys',
         'begin with `format: 1`',
       ),
@@ -95,6 +95,6 @@ function includes(tree: MapTree): { name: string; place: Place }[] {
   if (value === undefined) return []
   const items = value.kind === 'list' ? value.items : [value]
   return items.flatMap((item) =>
-    item.kind === 'scalar' && item.is === 'text' ? [{ name: item.text, place: item.place }] : [],
+    item.kind === 'scalar' && item.text.trim() !== '' ? [{ name: item.text, place: item.place }] : [],
   )
 }

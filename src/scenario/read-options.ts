@@ -2,7 +2,7 @@ import type { OptionInput, Provenance } from './checked.ts'
 import { type Fault, faultAt, type Place } from './fault.ts'
 import { optionKeys, type ScenarioHead, type Settings, scenarioKeys } from './keys/index.ts'
 import { optionHeadKeys } from './option-keys.ts'
-import { readKeys } from './reading.ts'
+import { readKeys, refuseUnknown } from './reading.ts'
 import {
   type FormulaParser,
   LONGEST_RULE,
@@ -11,8 +11,7 @@ import {
   type UserRule,
 } from './rule-formula.ts'
 import { crossFaults, type Written } from './rules.ts'
-import type { Keys } from './schema.ts'
-import { laidOver, type MapTree, picked, placeOf, type Tree, without } from './tree.ts'
+import { inWords, laidOver, type MapTree, picked, placeOf, type Tree, without } from './tree.ts'
 
 /** Most options that a scenario may have. */
 export const MOST_OPTIONS = 64
@@ -63,7 +62,7 @@ function optionTrees(tree: MapTree, base: MapTree, faults: Fault[]): readonly Op
       faultAt(
         value.place,
         value.kind === 'list' && value.items.length > 0 ? 'list.too-long' : 'shape.list',
-        value.kind === 'list' ? `${value.items.length} options` : `a ${value.kind}`,
+        value.kind === 'list' ? `${value.items.length} options` : inWords(value),
         `a list of 1 to ${MOST_OPTIONS} options`,
         'write `- {id: …, …}` a line',
       ),
@@ -91,7 +90,7 @@ function optionTree(
       faultAt(
         item.place,
         'shape.mapping',
-        item.kind === 'list' ? 'a list' : item.text,
+        inWords(item),
         'a mapping with `id` and overrides',
         'write `- {id: …, …}`',
       ),
@@ -137,11 +136,7 @@ function refuseStrangers(overrides: MapTree, faults: Fault[]): void {
       ),
     )
   }
-  const strangers = without(overrides, [...Object.keys(optionKeys), ...ofScenario])
-  const optional: Keys = Object.fromEntries(
-    Object.entries(optionKeys).map(([name, key]) => [name, { ...key, required: false }]),
-  )
-  readKeys(optional, strangers, '', { of: 'scenario', faults, provenance: [] })
+  refuseUnknown(optionKeys, without(overrides, ofScenario), '', faults)
 }
 
 /** What the merged keys of an option say; what they do not say is told at the block, or where it is blanked. */

@@ -1,9 +1,9 @@
 import type { Outcome, Provenance, Scenario } from './checked.ts'
-import type { Fault, Place } from './fault.ts'
+import { type Fault, inOrder, type Place } from './fault.ts'
 import { withIncludes } from './includes.ts'
 import { optionKeys, type ScenarioHead, scenarioKeys } from './keys/index.ts'
 import { MOST_OPTIONS, readOptions } from './read-options.ts'
-import { readKeys } from './reading.ts'
+import { readKeys, refuseUnknown } from './reading.ts'
 import { dateFault } from './rules.ts'
 import { type Keys, list } from './schema.ts'
 import { type Access, type MapTree, picked, placeOf, without } from './tree.ts'
@@ -46,7 +46,7 @@ export async function readScenarioParts(source: string, file: string, access: Ac
     faults.push(...dateFault(head.date, placeOf(tree, 'date')))
   const base = without(tree, [...Object.keys(scenarioKeys), 'options'])
   const options = await readOptions(tree, base, head, faults)
-  const unique = withoutRepeats(faults)
+  const unique = inOrder(faults)
   return {
     scenario: unique.length > 0 ? null : { head, options, files },
     nodeNames: nodeNames(tree),
@@ -68,19 +68,5 @@ function nodeNames(tree: MapTree): ScenarioRead['nodeNames'] {
 function refuseUnknownAtTop(tree: MapTree, faults: Fault[]): void {
   const options = list({ meaning: 'Alternatives.', longest: MOST_OPTIONS })
   const all: Keys = { ...scenarioKeys, ...optionKeys, options }
-  const strangers = without(tree, Object.keys(all))
-  const nobody: Keys = Object.fromEntries(
-    Object.entries(all).map(([name, key]) => [name, { ...key, required: false }]),
-  )
-  readKeys(nobody, strangers, '', { of: 'scenario', faults, provenance: [] })
-}
-
-/** Options share keys, so one slip is found once an option; it is told once. */
-function withoutRepeats(faults: readonly Fault[]): readonly Fault[] {
-  const seen = new Set<string>()
-  const unique = faults.filter(({ code, file, line, column, found }) => {
-    const key = [code, file, line, column, found].join('\u0000')
-    return seen.has(key) ? false : seen.add(key)
-  })
-  return unique.sort((a, b) => (a.file === b.file ? a.line - b.line || a.column - b.column : 0))
+  refuseUnknown(all, tree, '', faults)
 }

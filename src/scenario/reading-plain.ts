@@ -3,12 +3,12 @@ import { nearest } from './nearest.ts'
 import type { Read, Reading } from './reading.ts'
 import { readNumber } from './reading-quantity.ts'
 import type { ChoiceKey, CountKey, ListKey, RowsKey, TableKey, TextKey } from './schema.ts'
-import type { ScalarTree, Tree } from './tree.ts'
+import { inWords, type ScalarTree, type Tree } from './tree.ts'
 
 /** A whole number. */
 export function readCount(key: CountKey, tree: Tree, path: string, { faults }: Reading): Read<number> | null {
-  const text = tree.kind === 'scalar' ? tree.text : `a ${tree.kind}`
-  const allowed = `a whole number from ${key.min} to ${key.max}`
+  const text = inWords(tree)
+  const allowed = key.min === key.max ? `only ${key.min}` : `a whole number from ${key.min} to ${key.max}`
   if (!/^[+-]?\d+$/.test(text)) {
     faults.push(
       faultAt(tree.place, 'number.not-whole', text, allowed, `write a whole number for \`${path}\``),
@@ -17,7 +17,8 @@ export function readCount(key: CountKey, tree: Tree, path: string, { faults }: R
   }
   const value = Number(text)
   if (value >= key.min && value <= key.max) return { value }
-  faults.push(faultAt(tree.place, 'number.out-of-range', text, allowed, 'choose a number inside'))
+  const remedy = key.min === key.max ? `write \`${path}: ${key.min}\`` : 'choose a number inside'
+  faults.push(faultAt(tree.place, 'number.out-of-range', text, allowed, remedy))
   return null
 }
 
@@ -28,7 +29,7 @@ export function readChoice(
   path: string,
   { faults }: Reading,
 ): Read<string> | null {
-  const text = tree.kind === 'scalar' ? tree.text : `a ${tree.kind}`
+  const text = inWords(tree)
   const word = text === 'true' ? 'yes' : text === 'false' ? 'no' : text
   if (key.among.includes(word)) return { value: word }
   const near = nearest(text, key.among)
@@ -39,9 +40,15 @@ export function readChoice(
 
 /** A text, in the form that is due. */
 export function readText(key: TextKey, tree: Tree, path: string, { faults }: Reading): Read<string> | null {
-  if (tree.kind !== 'scalar') {
+  if (tree.kind !== 'scalar' || tree.text.trim() === '') {
     faults.push(
-      faultAt(tree.place, 'shape.text', `a ${tree.kind}`, 'a text', `write one text for \`${path}\``),
+      faultAt(
+        tree.place,
+        'shape.text',
+        tree.kind === 'scalar' ? 'an empty text' : inWords(tree),
+        'a text',
+        `write one text for \`${path}\`, or remove it`,
+      ),
     )
     return null
   }
@@ -134,7 +141,7 @@ export function readTable(
 function scalarNumber(key: TableKey, tree: Tree, path: string, reading: Reading): number | null {
   if (tree.kind === 'scalar' && tree.is !== 'null') return readNumber(key, tree, path, reading)
   reading.faults.push(
-    faultAt(tree.place, 'number.unreadable', `a ${tree.kind}`, 'a number', `write a number for \`${path}\``),
+    faultAt(tree.place, 'number.unreadable', inWords(tree), 'a number', `write a number for \`${path}\``),
   )
   return null
 }
@@ -149,7 +156,7 @@ export function readRows(
   const due = `rows of [${key.columns.map(({ name, unit }) => `${name} in ${unit}`).join(', ')}]`
   if (tree.kind !== 'list' || tree.items.length === 0) {
     reading.faults.push(
-      faultAt(tree.place, 'rows.form', tree.kind, due, `write a list of rows for \`${path}\``),
+      faultAt(tree.place, 'rows.form', inWords(tree), due, `write a list of rows for \`${path}\``),
     )
     return null
   }
@@ -175,7 +182,7 @@ export function readRows(
         faultAt(
           row.place,
           'rows.form',
-          row.kind === 'list' ? `${row.items.length} entries` : row.kind,
+          row.kind === 'list' ? `${row.items.length} entries` : inWords(row),
           due,
           'write one number with its unit a column',
         ),

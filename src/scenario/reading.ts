@@ -6,7 +6,7 @@ import { readChoice, readCount, readList, readRows, readTable, readText } from '
 import { readQuantity, readRange } from './reading-quantity.ts'
 import { readRecord } from './reading-record.ts'
 import type { Key, Keys } from './schema.ts'
-import type { MapTree, Tree } from './tree.ts'
+import { inWords, type MapTree, type Tree } from './tree.ts'
 
 /** Whose file is read: it decides the form of quantities and what provenance says. */
 export interface Reading {
@@ -37,7 +37,7 @@ export function readKeys(
   reading: Reading,
   near: Place | null = tree?.place ?? null,
 ): Readonly<Record<string, unknown>> {
-  if (tree !== null) refuseUnknown(keys, tree, path, reading)
+  if (tree !== null) refuseUnknown(keys, tree, path, reading.faults)
   const values: Record<string, unknown> = {}
   for (const [name, key] of Object.entries(keys)) {
     const entry = tree?.entries.get(name)
@@ -47,7 +47,8 @@ export function readKeys(
   return values
 }
 
-function refuseUnknown(keys: Keys, tree: MapTree, path: string, { faults }: Reading): void {
+/** Tells every key that is not declared, with the declared one nearest to it. */
+export function refuseUnknown(keys: Keys, tree: MapTree, path: string, faults: Fault[]): void {
   const known = Object.keys(keys)
   for (const [name, { at }] of tree.entries) {
     if (Object.hasOwn(keys, name)) continue
@@ -94,12 +95,11 @@ function readGroup(
   if (tree === null) return readKeys(keys, null, path, reading, near)
   if (tree.kind === 'map') return readKeys(keys, tree, path, reading)
   const names = Object.keys(keys).slice(0, 8).join(', ')
-  const found = tree.kind === 'list' ? 'a list' : tree.text
   reading.faults.push(
     faultAt(
       tree.place,
       'shape.mapping',
-      found,
+      inWords(tree),
       `a mapping with keys such as ${names}`,
       `write \`{key: value}\` or indented keys under \`${path}\``,
     ),

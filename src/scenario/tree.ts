@@ -66,6 +66,12 @@ export function without(tree: MapTree, keys: readonly string[]): MapTree {
   return { ...tree, entries }
 }
 
+/** What stands there, in words for a message. */
+export function inWords(tree: Tree): string {
+  if (tree.kind === 'scalar') return tree.is === 'null' ? 'nothing' : tree.text
+  return tree.kind === 'map' ? 'a mapping' : 'a list'
+}
+
 /** Where the value of a key stands; where the mapping stands when the key is not there. */
 export const placeOf = (tree: MapTree, key: string): Place =>
   tree.entries.get(key)?.value.place ?? tree.entries.get(key)?.at ?? tree.place

@@ -4,6 +4,9 @@ import type { Tree } from './tree.ts'
 import { DEEPEST, tooDeep, walkDocument } from './yaml-walk.ts'
 
 const LARGEST = 1024 * 1024
+/** Codes of `[` and `{`; those of `]` and `}` are two higher. */
+const OPEN_LIST = 0x5b
+const OPEN_MAP = 0x7b
 /** A text that is no YAML breaks on every line; the first few faults tell it. */
 const MOST_SYNTAX_FAULTS = 20
 
@@ -47,11 +50,13 @@ function refusal(text: string, whole: Place): Fault | null {
     )
   }
   // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what is looked for
-  if (/[\u0000-\u0008\u000e-\u001a\u001c-\u001f\ufffd]/.test(text)) {
+  const strange = text.search(/[\u0000-\u0008\u000e-\u001f\ufffd]/)
+  if (strange >= 0) {
+    const before = text.slice(0, strange).split('\n')
     return faultAt(
-      whole,
+      { ...whole, line: before.length, column: before.at(-1)!.length + 1 },
       'file.binary',
-      'bytes that are no text',
+      `a byte that is no text (${text.charCodeAt(strange).toString(16).padStart(4, '0')} hex)`,
       'UTF-8 text',
       'save the file as UTF-8 text',
     )
@@ -88,9 +93,10 @@ function parsed(text: string, lineCounter: LineCounter): Document.Parsed | null 
 /** How deep brackets nest, so that the parser is never sent down a bottomless text. */
 function deepestBracket(text: string): number {
   let [depth, deepest] = [0, 0]
-  for (const sign of text) {
-    if (sign === '[' || sign === '{') deepest = Math.max(deepest, ++depth)
-    else if (sign === ']' || sign === '}') depth--
+  for (let k = 0; k < text.length; k++) {
+    const sign = text.charCodeAt(k)
+    if (sign === OPEN_LIST || sign === OPEN_MAP) deepest = Math.max(deepest, ++depth)
+    else if (sign === OPEN_LIST + 2 || sign === OPEN_MAP + 2) depth--
   }
   return deepest
 }

@@ -8,7 +8,8 @@ export function knownLeaves(
   node: readonly Provenance[],
   at: OperatingPoint,
 ): readonly KnownLeaf[] {
-  return [...[...option, ...node].flatMap(leavesOf), ...pointLeaves(at), BOLTZMANN, CHARGE]
+  const given = [...option, ...node].flatMap(leavesOf)
+  return [...given, ...given.flatMap(byPolarity), ...pointLeaves(at), BOLTZMANN, CHARGE]
 }
 
 function leavesOf(given: Provenance): readonly KnownLeaf[] {
@@ -21,6 +22,12 @@ function leavesOf(given: Provenance): readonly KnownLeaf[] {
     { symbol: `${symbol}_min`, meaning: `${meaning} (low end)`, unit, source, path, value: least },
     { symbol: `${symbol}_max`, meaning: `${meaning} (high end)`, unit, source, path, value: most },
   ]
+}
+
+/** Values of a transistor also go by their polarity where a formula speaks of both: `L_n`, `L_p`. */
+function byPolarity(leaf: KnownLeaf): readonly KnownLeaf[] {
+  const side = leaf.path?.startsWith('nmos.') ? 'n' : leaf.path?.startsWith('pmos.') ? 'p' : null
+  return side === null ? [] : [{ ...leaf, symbol: `${leaf.symbol}_${side}` }]
 }
 
 function pointLeaves(at: OperatingPoint): readonly KnownLeaf[] {

@@ -51,6 +51,7 @@ const ALIASES: Readonly<Record<string, readonly string[]>> = {
   'oscillator.range': ['f_op', 'f_in', 'f_ck', 'f_osc'],
   'oscillator.startup_gain': ['required'],
   'oscillator.tank_q': ['Q_lo', 'Q_hi'],
+  error_ratio: ['SER'],
 }
 
 /** Inputs said to come from a key that only happens to have the same value. */
