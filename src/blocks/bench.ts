@@ -48,6 +48,17 @@ export const lowestCoreVoltage = formula(
   (V_nom, tol_V, V_ir) => V_nom * (1 - tol_V) - V_ir,
 )
 
+/** V_raised = V_nom + V_lift. V_nom [V], V_lift [V] → [V]. */
+export const liftedSupply = formula(
+  {
+    symbol: 'V_nom',
+    meaning: 'nominal supply of the stacked stages, lifted',
+    unit: 'V',
+    source: 'definition',
+  },
+  (V_nom, V_lift) => V_nom + V_lift,
+)
+
 /** V_high = V_nom (1 + tol_V). V_nom [V], tol_V [1] → [V]. */
 export const highestSupplyVoltage = formula(
   { symbol: 'V_high', meaning: 'highest supply of the case', unit: 'V', source: 'definition' },
@@ -91,31 +102,51 @@ function stackSupply(given: Case, at: OperatingPoint, nmos: DeviceHere, t: Trace
   const { settings, node } = given
   const chosen = nominalStackSupply(settings, node)
   if ('missing' in chosen) return chosen
-  const { regulator_dropout, ir_drop } = settings.supply
+  const { regulator_dropout, ir_drop, lift } = settings.supply
+  const V_nom = lift === null ? chosen.V_unlifted : t.calc(liftedSupply, chosen.V_unlifted, lift)
   return {
     device: chosen.device === node.nmos ? nmos : deviceAt(chosen.device, at, t),
-    V: t.calc(lowestSupplyVoltage, chosen.V_nom, at.tol_V, regulator_dropout, ir_drop),
-    V_high: t.calc(highestSupplyVoltage, chosen.V_nom, at.tol_V),
+    V: t.calc(lowestSupplyVoltage, V_nom, at.tol_V, regulator_dropout, ir_drop),
+    V_high: t.calc(highestSupplyVoltage, V_nom, at.tol_V),
   }
+}
+
+/** The supply that the stacked stages use before any lift, their transistor, and the nominal supply with the lift. */
+export interface NominalSupply {
+  readonly V_unlifted: number
+  readonly V_nom: number
+  readonly device: DeviceValues
 }
 
 /** Which supply and which transistor the stacked stages use, or why they have none. */
 export function nominalStackSupply(
   settings: Settings,
   node: NodeValues,
-): { readonly V_nom: number; readonly device: DeviceValues } | { readonly missing: string } {
+): NominalSupply | { readonly missing: string } {
+  const chosen = unliftedSupply(settings, node)
+  if ('missing' in chosen) return chosen
+  const { V_unlifted, device } = chosen
+  return { V_unlifted, V_nom: V_unlifted + (settings.supply.lift ?? 0), device }
+}
+
+function unliftedSupply(
+  settings: Settings,
+  node: NodeValues,
+): Omit<NominalSupply, 'V_nom'> | { readonly missing: string } {
   const { use, voltage, core_voltage } = settings.supply
   const core = core_voltage ?? node.supply.core
   if (use === 'io') {
     if (node.thick === null) return { missing: 'the node states no thick-oxide device for the io supply' }
-    const V_nom = voltage ?? node.supply.io
-    return V_nom === null ? { missing: 'the node states no io supply' } : { V_nom, device: node.thick }
+    const V_unlifted = voltage ?? node.supply.io
+    return V_unlifted === null
+      ? { missing: 'the node states no io supply' }
+      : { V_unlifted, device: node.thick }
   }
   if (use === 'analogue' && voltage === null && node.supply.analogue === null) {
     return { missing: 'the node offers no analogue supply and the scenario states no voltage' }
   }
-  if (use === 'core') return { V_nom: voltage ?? core, device: node.nmos }
-  return { V_nom: voltage ?? node.supply.analogue ?? core, device: node.nmos }
+  if (use === 'core') return { V_unlifted: voltage ?? core, device: node.nmos }
+  return { V_unlifted: voltage ?? node.supply.analogue ?? core, device: node.nmos }
 }
 
 /** J_best = min(J_peak, J_max). J_peak [A/m], J_max [A/m] → [A/m]. */

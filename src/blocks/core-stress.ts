@@ -13,16 +13,19 @@ export function coreRunsHigh(given: Case): boolean {
   return nominalCore(given) * (1 + tolerance) > node.supply.device_limit
 }
 
-/** The stress check of such a stage: the device that is off, or fully on, stands the whole supply. */
-export function coreStressOutcome(bench: Bench): Outcome {
-  const { t, at, node, V_core } = bench
+/** The stress check of such a stage: the device that is off, or fully on, stands the whole supply V_high [V]. */
+export function wholeSupplyOutcome(V_high: number, { t, node }: Bench): Outcome {
   const limit = node.supply.device_limit
-  const stress = t.calc(highestSupplyVoltage, nominalCore(bench), at.tol_V)
   return {
     required: limit,
-    available: stress,
-    margin: t.calc(marginAtMost, limit, stress),
-    basis: 'device limit of the node; the whole core supply stands across one device',
-    supply: V_core,
+    available: V_high,
+    margin: t.calc(marginAtMost, limit, V_high),
+    basis: 'device limit of the node; the whole supply stands across one device',
   }
+}
+
+/** As above, on the core supply. */
+export function coreStressOutcome(bench: Bench): Outcome {
+  const V_high = bench.t.calc(highestSupplyVoltage, nominalCore(bench), bench.at.tol_V)
+  return { ...wholeSupplyOutcome(V_high, bench), supply: bench.V_core }
 }

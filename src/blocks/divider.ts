@@ -23,13 +23,13 @@ function prepare(bench: Bench): Divider | Unprepared {
   const { device, V, V_high } = stack
   const f_osc = settings.oscillator!.range[1]
   const A = settings.clock.gain
-  const { stage, V_tail, V_sw } = latchStack(bench, device, settings.headroom.latch_swing, A, t)
+  const { stage, V_tail, V_sw, V_off } = latchStack(bench, device, settings.headroom.latch_swing, A, t)
   const beta = peakingFactor(settings.peaking.clock, t)
   const k_latch = latchFactorOf(t)
   const demand = (J: number, trace: Trace): number =>
     trace.calc(latchDemand, f_osc, latchLoadAt(device, node.shares, A, fan_out, J, trace), k_latch, beta)
   const rule = { key: 'divider', f_op: f_osc, k: settings.demand.multiples.divider, beta }
-  return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, device, V_sw }
+  return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, V_off, device, V_sw }
 }
 
 const ONE = { symbol: 'A_regen', meaning: 'least loop gain that holds a state', unit: '1', source: 'law' }

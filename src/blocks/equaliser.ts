@@ -6,8 +6,8 @@ import { saturationAt } from '../device/fixed-bias.ts'
 import { efficiency, gateCapacitanceOf, selfGain, transconductanceAt } from '../device/speed.ts'
 import { linearPair, linearSwing, peakInput } from '../device/stacks/linear-pair.ts'
 import { tailVoltage } from '../device/stacks/lines.ts'
-import type { Bench, Case, StackSupply } from './bench.ts'
-import { coreRunsHigh, coreStressOutcome } from './core-stress.ts'
+import type { Bench, StackSupply } from './bench.ts'
+import { wholeSupplyOutcome } from './core-stress.ts'
 import { dataBandwidth } from './current-mode-driver.ts'
 import { deviceResults, notedDesignDensity } from './design-point.ts'
 import {
@@ -101,8 +101,7 @@ function selfGainOutcome(state: Equaliser, bench: Bench): Outcome {
       required,
       available,
       margin,
-      basis: 'both devices at half the core supply',
-      supply: bench.V_core,
+      basis: 'both devices at half the supply',
     }
   }
   const { speed, device } = state
@@ -118,7 +117,6 @@ function selfGainOutcome(state: Equaliser, bench: Bench): Outcome {
   }
 }
 
-const isPair = ({ settings }: Case): boolean => settings.receiver.equaliser === 'current-mode'
 const [SPEED, HEADROOM, STRESS] = stackChecks('Receive equaliser')
 
 const CHECKS: readonly CheckSpec<Equaliser>[] = [
@@ -134,9 +132,8 @@ const CHECKS: readonly CheckSpec<Equaliser>[] = [
   },
   {
     ...STRESS!,
-    asked: (given) => (isPair(given) ? STRESS!.asked!(given) : coreRunsHigh(given)),
     evaluate: (state, bench) =>
-      'speed' in state ? STRESS!.evaluate(state, bench) : coreStressOutcome(bench),
+      'speed' in state ? STRESS!.evaluate(state, bench) : wholeSupplyOutcome(state.V_high, bench),
   },
   {
     name: 'self_gain',

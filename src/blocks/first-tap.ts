@@ -1,7 +1,7 @@
 import { marginAtLeast } from '../derivation/margin.ts'
 import type { DeviceHere } from '../device/conditions.ts'
 import type { FixedBias } from '../device/fixed-bias.ts'
-import { speedAt } from '../device/speed.ts'
+import { gateCapacitanceOf } from '../device/speed.ts'
 import { halfDensity } from '../device/stacks/lines.ts'
 import type { Bench, Case, StackSupply } from './bench.ts'
 import { designDensity, deviceResults } from './design-point.ts'
@@ -55,20 +55,26 @@ function currentModeLoop(
   rule: Rule,
 ): CurrentModeLoop {
   const { settings, t } = bench
-  const { stage, V_tail } = latchStack(bench, device, settings.headroom.latch_swing, settings.clock.gain, t)
+  const { stage, V_tail, V_off } = latchStack(
+    bench,
+    device,
+    settings.headroom.latch_swing,
+    settings.clock.gain,
+    t,
+  )
   const speed = stageSpeed(
     {
       stage,
       V,
       rule,
       demand: (J, trace) => {
-        const { C_gg } = speedAt(device, trace.calc(halfDensity, J), trace)
+        const C_gg = gateCapacitanceOf(device, trace.calc(halfDensity, J), trace)
         return loop(trace.calc(layoutShare, device.of.C_lay, C_gg), trace)
       },
     },
     t,
   )
-  return { speed, V_S: V_tail, V_high, device }
+  return { speed, V_S: V_tail, V_high, V_off, device }
 }
 
 function dynamicSpeed({ bias, loop, rule }: DynamicLoop, bench: Bench): Outcome {

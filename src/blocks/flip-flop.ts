@@ -56,7 +56,7 @@ export function flipFlop(
   const { settings, node, t } = bench
   const { device, V, V_high } = stack
   const A = settings.clock.gain
-  const { stage, V_tail, V_sw } = latchStack(bench, device, settings.headroom.latch_swing, A, t)
+  const { stage, V_tail, V_sw, V_off } = latchStack(bench, device, settings.headroom.latch_swing, A, t)
   const beta = peakingFactor(settings.peaking.receive, t)
   const k_latch = latchFactorOf(t)
   const f_in = t.calc(flipFlopRate, f_d)
@@ -67,6 +67,7 @@ export function flipFlop(
   return {
     speed: stageSpeed({ stage, V, rule, demand }, t),
     V_S: V_tail,
+    V_off,
     V_high,
     device,
     V_sw,

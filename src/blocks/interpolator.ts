@@ -35,7 +35,7 @@ function prepare(bench: Bench): Stacked | Unprepared {
   if (stack.missing !== undefined) return { unknown: stack.missing }
   const { device, V, V_high } = stack
   const { gain: A, fan_out } = settings.clock
-  const { stage, V_tail } = latchStack(bench, device, settings.headroom.clock_swing, A, t)
+  const { stage, V_tail, V_off } = latchStack(bench, device, settings.headroom.clock_swing, A, t)
   const beta = peakingFactor(settings.peaking.clock, t)
   const n_leg = t.leaf(LEGS, LEGS.value)
   const { m, d, w } = node.shares
@@ -46,7 +46,7 @@ function prepare(bench: Bench): Stacked | Unprepared {
     return trace.calc(interpolatorDemand, rates.f_ck, A, load, beta)
   }
   const rule = { key: 'interpolator', f_op: rates.f_ck, k: settings.demand.multiples.interpolator, beta }
-  return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high }
+  return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, V_off }
 }
 
 /** The phase interpolator that places the sampling clock. */

@@ -17,7 +17,7 @@ import { dataBandwidth } from './current-mode-driver.ts'
 import { chainDemand, type LinearChain, linearChain } from './linear-chain.ts'
 import { loadFactor } from './load.ts'
 import { combineRoutes, type Rule, ruleRoute } from './stage-speed.ts'
-import type { Outcome } from './sub-block.ts'
+import type { Outcome, Unprepared } from './sub-block.ts'
 
 /**
  * A receive chain of complementary (inverter) stages at the core supply, each gate resting at half of it.
@@ -48,24 +48,34 @@ export const supplyOfGate = formula(
   (V_GS) => 2 * V_GS,
 )
 
-/** A chain of complementary stages at the lowest core supply. */
+/** A chain of complementary stages at the lowest supply of the stacked stages: an analogue supply where there is one. */
 export interface InverterChain {
   readonly chain: LinearChain
   readonly here: Inverter
   readonly BW: number
   readonly rule: Rule
+  /** Lowest and highest supply [V]. */
+  readonly V: number
+  readonly V_high: number
 }
 
 /** The chain at its operating point. */
-export function inverterChain(bench: Bench): InverterChain {
-  const { settings, rates, nmos, pmos, V_core, t } = bench
+export function inverterChain(bench: Bench): InverterChain | Unprepared {
+  const { settings, rates, nmos, pmos, stack, t } = bench
+  if (stack.missing !== undefined) return { unknown: stack.missing }
+  if (stack.device !== nmos) {
+    return { unknown: 'the node states no thick-oxide pMOS for complementary stages under the io supply' }
+  }
+  const { V, V_high } = stack
   const chain = linearChain(settings, t)
   const f_N = rates.f_N!
   return {
     chain,
-    here: inverterAt(nmos, pmos, t.calc(halfSupply, V_core), t),
+    here: inverterAt(nmos, pmos, t.calc(halfSupply, V), t),
     BW: t.calc(dataBandwidth, settings.receiver.bandwidth_factor, f_N),
     rule: { key: 'equaliser', f_op: f_N, k: settings.demand.multiples.equaliser, beta: chain.beta },
+    V,
+    V_high,
   }
 }
 
@@ -77,12 +87,11 @@ function demandAt({ chain, BW }: InverterChain, c_lay: number, { settings, node 
 
 /** Speed of the stages against what the chain needs, by both routes. */
 export function inverterSpeed(state: InverterChain, bench: Bench): Outcome {
-  const { t, V_core } = bench
+  const { t } = bench
   const required = demandAt(state, state.here.c_lay, bench, t)
   const available = state.here.f_T
   const derived = { required, available, margin: t.calc(marginAtLeast, available, required) }
-  const found = combineRoutes(ruleRoute(state.rule, bench), derived, bench, 'half the supply on each gate')
-  return { ...found, supply: V_core }
+  return combineRoutes(ruleRoute(state.rule, bench), derived, bench, 'half the supply on each gate')
 }
 
 /** How far speed and swing exceed what is needed when the nMOS carries J per width, as shares of it. */
@@ -135,9 +144,9 @@ const NEEDED = {
 }
 const ON_BULK = { symbol: 'V_S', meaning: 'sources stand on their bulk', unit: 'V', source: 'definition' }
 
-/** The lowest core supply against the lowest that gives the required speed and swing. */
+/** The lowest supply against the lowest that gives the required speed and swing. */
 export function inverterHeadroom(state: InverterChain, bench: Bench): Outcome {
-  const { t, V_core, nmos, settings } = bench
+  const { t, nmos, settings } = bench
   const { J: found, reached, basis } = neededDensity(state, bench)
   const { A, shrink, beta } = state.chain
   const inputs = { BW: state.BW, A, beta, shrink, V_lin: settings.receiver.linear_swing }
@@ -145,10 +154,9 @@ export function inverterHeadroom(state: InverterChain, bench: Bench): Outcome {
   const required = t.calc(supplyOfGate, gateVoltageAt(nmos, J, t.leaf(ON_BULK, 0), t))
   return {
     required,
-    available: V_core,
-    margin: t.calc(marginAtLeast, V_core, required),
+    available: state.V,
+    margin: t.calc(marginAtLeast, state.V, required),
     basis,
-    supply: V_core,
     ...(reached
       ? {}
       : { reason: 'out of reach at any supply; judged at the largest admissible current per width' }),

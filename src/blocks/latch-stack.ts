@@ -1,3 +1,4 @@
+import { formula } from '../derivation/formula.ts'
 import { PLAIN, type Trace } from '../derivation/trace.ts'
 import type { DeviceHere } from '../device/conditions.ts'
 import { sourceAbove, tailVoltage } from '../device/stacks/lines.ts'
@@ -15,7 +16,20 @@ export interface LatchStack {
   /** Voltage below the clock pair [V]; 0 without a tail. */
   readonly V_tail: number
   readonly V_sw: number
+  /** Lowest source of the data pair while its clock pair conducts [V]: what device stress is judged from. */
+  readonly V_off: number
 }
+
+/** V_off = V_tail + c_sat U_T: the clock pair at the edge of saturation. V_tail [V], c_sat [1], U_T [V] → [V]. */
+export const lowestDataSource = formula(
+  {
+    symbol: 'V_S',
+    meaning: 'lowest source of the data pair while its clock pair conducts',
+    unit: 'V',
+    source: 'derived: the clock pair keeps its least saturation voltage',
+  },
+  (V_tail, c_sat, U_T) => V_tail + c_sat * U_T,
+)
 
 /**
  * The stack of latches, multiplexers and interpolators: a data pair on a clock pair, the clock ac-coupled, on a
@@ -42,7 +56,8 @@ export function latchStack(bench: Bench, device: DeviceHere, V_sw: number, A: nu
     c_sat: t.leaf(SWITCH_FLOOR, SWITCH_FLOOR.value),
     ownSaturation: true,
   })
-  return { stage, V_tail, V_sw }
+  const c_sat = t.leaf(SWITCH_FLOOR, SWITCH_FLOOR.value)
+  return { stage, V_tail, V_sw, V_off: t.calc(lowestDataSource, V_tail, c_sat, device.U_T) }
 }
 
 const NO_TAIL = {

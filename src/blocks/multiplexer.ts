@@ -48,7 +48,7 @@ function prepare(bench: Bench): Stacked | Unprepared {
   const { multiplexer, multiplexer_fan_out: phi } = settings.transmitter
   const { multiplexer_2, multiplexer_4 } = settings.demand.multiples
   const A = settings.clock.gain
-  const { stage, V_tail } = latchStack(bench, device, settings.headroom.clock_swing, A, t)
+  const { stage, V_tail, V_off } = latchStack(bench, device, settings.headroom.clock_swing, A, t)
   const beta = peakingFactor(settings.peaking.transmit, t)
   const n_leg = t.leaf(LEGS, multiplexer === '2:1' ? 2 : 4)
   const BW = t.calc(edgeBandwidth, rates.UI!)
@@ -60,7 +60,7 @@ function prepare(bench: Bench): Stacked | Unprepared {
   }
   const k = t.calc(multiplexerMultiple, multiplexer === '2:1' ? multiplexer_2 : multiplexer_4, phi)
   const rule = { key: 'multiplexer', f_op: rates.f_B!, k, beta }
-  return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high }
+  return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, V_off }
 }
 
 /** The last multiplexer of a current-mode transmitter. A source-series driver is fed by CMOS gates, judged with it. */

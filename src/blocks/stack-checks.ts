@@ -9,6 +9,8 @@ export interface Stacked {
   readonly speed: StageSpeed
   readonly V_S: number
   readonly V_high: number
+  /** Source from which device stress is judged, where it is not the common source node [V]. */
+  readonly V_off?: number
 }
 
 /** The three checks every stacked stage has: device speed, headroom and, on a lifted supply, device stress. */
@@ -37,7 +39,7 @@ export function stackChecks(title: string): readonly CheckSpec<Stacked>[] {
       unit: 'V',
       sense: 'at most',
       asked: stackRunsHigh,
-      evaluate: (state, bench) => stressOutcome(state.V_high, state.V_S, bench),
+      evaluate: (state, bench) => stressOutcome(state.V_high, state.V_off ?? state.V_S, bench),
     },
   ]
 }

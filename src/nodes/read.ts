@@ -2,7 +2,7 @@ import type { Outcome, Provenance } from '../scenario/checked.ts'
 import { type Fault, faultAt, type Place } from '../scenario/fault.ts'
 import { nearest } from '../scenario/nearest.ts'
 import { readKeys } from '../scenario/reading.ts'
-import { type Access, laidOver, type MapTree, type Tree, without } from '../scenario/tree.ts'
+import { type Access, inWords, laidOver, type MapTree, type Tree, without } from '../scenario/tree.ts'
 import { yamlTree } from '../scenario/yaml-tree.ts'
 import { type NodeValues, nodeKeys } from './keys.ts'
 import type { Node } from './node.ts'
@@ -121,35 +121,43 @@ function readNodeText(
   chain: readonly string[],
   faults: Fault[],
 ): Node | null {
-  const tree = mergedTree(text, file, access, chain, faults)
-  if (tree === null) return null
+  const merged = mergedTree(text, file, access, chain, faults)
+  if (merged === null) return null
   const provenance: Provenance[] = []
-  const before = faults.length
-  const values = readKeys(nodeKeys, tree, '', { of: 'node', faults, provenance }) as unknown as NodeValues
-  return faults.length > before ? null : { id: values.id, label: values.label, values, provenance }
+  const found: Fault[] = []
+  const reading = { of: 'node' as const, faults: found, provenance }
+  const values = readKeys(nodeKeys, merged.tree, '', reading) as unknown as NodeValues
+  faults.push(...found.filter(({ code }) => merged.complete || code !== 'key.missing'))
+  const { id, label } = values
+  return found.length > 0 || !merged.complete ? null : { id, label, values, provenance }
 }
 
-/** The tree of a node file laid over the one it is based on. */
+/** A node file laid over the one it is based on; not complete when that one cannot be had. */
+interface Merged {
+  readonly tree: MapTree
+  readonly complete: boolean
+}
+
 function mergedTree(
   text: string,
   file: string,
   access: Access,
   chain: readonly string[],
   faults: Fault[],
-): MapTree | null {
+): Merged | null {
   const { tree, faults: found } = yamlTree(text, file)
   faults.push(...found)
   if (tree === null) return null
   if (tree.kind !== 'map') {
     faults.push(
-      faultAt(tree.place, 'shape.mapping', `a ${tree.kind}`, 'a mapping of keys', 'begin with `format: 1`'),
+      faultAt(tree.place, 'shape.mapping', inWords(tree), 'a mapping of keys', 'begin with `format: 1`'),
     )
     return null
   }
   const base = tree.entries.get('based_on')?.value
-  if (base?.kind !== 'scalar' || base.is === 'null') return tree
+  if (base?.kind !== 'scalar' || base.is === 'null') return { tree, complete: true }
   const from = sourceOf({ name: base.text, place: base.place }, file, access, faults)
-  if (from === null) return null
+  if (from === null) return { tree, complete: false }
   const line = [...chain, file]
   if (line.includes(from.file) || line.length >= LONGEST_CHAIN) {
     faults.push(
@@ -161,8 +169,10 @@ function mergedTree(
         'base it on a built-in class',
       ),
     )
-    return null
+    return { tree, complete: false }
   }
   const below = mergedTree(from.text, from.file, access, line, faults)
-  return below === null ? null : (laidOver(without(below, OWN), tree as Tree) as MapTree)
+  if (below === null) return { tree, complete: false }
+  const laid = laidOver(without(below.tree, OWN), tree as Tree) as MapTree
+  return { tree: laid, complete: below.complete }
 }

@@ -88,6 +88,12 @@ export function formatQuantity(value: number, unit: string, shown?: string, digi
   return prefixed(value, known, digits)
 }
 
+/** Two limits for people: with a suitable prefix each where the unit takes one, else in the unit shown. */
+export function formatLimits(min: number, max: number, unit: string, shown?: string): string {
+  const one = (value: number): string => formatQuantity(value, unit, unit in SHOWN ? undefined : shown)
+  return `${one(min)} to ${one(max)}`
+}
+
 function prefixed(
   value: number,
   { base, rest, exponent }: { base: string; rest: string; exponent: number },

@@ -35,6 +35,9 @@ function plainSigns(text: string): string {
     .trim()
 }
 
+/** No symbol, nor two written together, is longer. */
+const LONGEST = 12
+
 const ALONE = /^dB(?:m|c(?:\/Hz)?)?$/
 const FACTOR = /\s*([*/]?)\s*(\(?)\s*([A-Za-z%µμΩ°℃]+)(?:\^?(-?\d+(?:\.\d+)?))?\s*(\)?)/y
 
@@ -46,6 +49,9 @@ const FACTOR = /\s*([*/]?)\s*(\(?)\s*([A-Za-z%µμΩ°℃]+)(?:\^?(-?\d+(?:\.\d+
  * @returns exponent of ten, offset and kind; or the part that is no unit, with likely ones
  */
 export function parseUnit(text: string): UnitOutcome {
+  const whole = unitOf(text)
+  if (whole !== null)
+    return { ok: true, unit: { exponent: whole.exponent, offset: whole.offset ?? 0, kind: whole.kind } }
   const plain = plainSigns(text)
   if (plain === '' || plain === '1') return { ok: true, unit: { exponent: 0, offset: 0, kind: {} } }
   if (ALONE.test(plain)) return { ok: true, unit: { exponent: 0, offset: 0, kind: { [plain]: 1 } } }
@@ -92,6 +98,7 @@ function parseProduct(plain: string): UnitOutcome {
 
 /** A symbol as one unit, or as two written together such as `Vs`. */
 function unitsOf(symbol: string): readonly Unit[] | null {
+  if (symbol.length > LONGEST) return null
   const one = unitOf(symbol)
   if (one !== null) return [one]
   for (let k = 1; k < symbol.length; k++) {

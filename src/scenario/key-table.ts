@@ -1,4 +1,4 @@
-import { formatQuantity } from '../quantity/format.ts'
+import { formatLimits } from '../quantity/format.ts'
 import type { Key, Keys } from './schema.ts'
 
 /** One line of the key table in the guide. */
@@ -69,8 +69,7 @@ const limits = (key: {
   readonly max: number
   readonly unit: string
   readonly shown?: string
-}): string =>
-  `${formatQuantity(key.min, key.unit, key.shown)} to ${formatQuantity(key.max, key.unit, key.shown)}`
+}): string => formatLimits(key.min, key.max, key.unit, key.shown)
 
 function defaultOf(key: Key): string {
   if (!('default' in key) || key.default === undefined) {

@@ -165,7 +165,9 @@ function rulesOf(tree: MapTree, parse: FormulaParser, faults: Fault[]): Readonly
   const rules: Record<string, UserRule> = {}
   for (const [name, { value }] of formulasOf(tree)?.entries ?? []) {
     // What is no text, or too long a one, is a fault of its form already.
-    if (value.kind !== 'scalar' || value.is === 'null' || value.text.length > LONGEST_RULE) continue
+    if (value.kind !== 'scalar' || value.is === 'null') continue
+    // What is empty or too long has been told as a text already.
+    if (value.text.trim() === '' || value.text.length > LONGEST_RULE) continue
     const read = readRule(value.text, value.place, parse)
     if (read.ok) rules[name] = read.rule
     else faults.push(read.fault)

@@ -1,5 +1,6 @@
 import type { Outcome, Provenance, Scenario } from './checked.ts'
 import { type Fault, inOrder, type Place } from './fault.ts'
+import type { FaultCode } from './fault-codes.ts'
 import { withIncludes } from './includes.ts'
 import { optionKeys, type ScenarioHead, scenarioKeys } from './keys/index.ts'
 import { MOST_OPTIONS, readOptions } from './read-options.ts'
@@ -7,6 +8,10 @@ import { readKeys, refuseUnknown } from './reading.ts'
 import { dateFault } from './rules.ts'
 import { type Keys, list } from './schema.ts'
 import { type Access, type MapTree, picked, placeOf, without } from './tree.ts'
+
+/** Codes by which an included file could not be read, and those it might have spared us. */
+const UNREAD = /^(?:file\.|include\.|yaml\.(?:syntax|documents|too-deep|aliases)$)/
+const MISSING: readonly FaultCode[] = ['key.missing', 'oscillator.missing']
 
 /** A scenario as far as it could be read: its faults, and the node names with their places in any case. */
 export interface ScenarioRead {
@@ -35,6 +40,7 @@ export async function readScenarioParts(source: string, file: string, access: Ac
   const faults: Fault[] = []
   const tree = withIncludes(source, file, access, [file], files, faults)
   if (tree === null) return { scenario: null, nodeNames: [], faults }
+  const complete = !faults.some(({ code }) => UNREAD.test(code))
   refuseUnknownAtTop(tree, faults)
   const provenance: Provenance[] = []
   const head = readKeys(scenarioKeys, picked(tree, Object.keys(scenarioKeys)), '', {
@@ -46,7 +52,7 @@ export async function readScenarioParts(source: string, file: string, access: Ac
     faults.push(...dateFault(head.date, placeOf(tree, 'date')))
   const base = without(tree, [...Object.keys(scenarioKeys), 'options'])
   const options = await readOptions(tree, base, head, faults)
-  const unique = inOrder(faults)
+  const unique = inOrder(complete ? faults : faults.filter(({ code }) => !MISSING.includes(code)))
   return {
     scenario: unique.length > 0 ? null : { head, options, files },
     nodeNames: nodeNames(tree),

@@ -1,12 +1,15 @@
-import { formatQuantity } from '../quantity/format.ts'
+import { formatLimits } from '../quantity/format.ts'
 import { parseQuantity, type QuantityFault } from '../quantity/parse-quantity.ts'
 import type { Spread } from './checked.ts'
 import { faultAt } from './fault.ts'
 import type { Read, Reading } from './reading.ts'
 import type { QuantityKey, RangeKey } from './schema.ts'
-import type { MapTree, ScalarTree, Tree } from './tree.ts'
+import { inWords, type MapTree, type ScalarTree, type Tree } from './tree.ts'
 
 type Limits = Pick<QuantityKey, 'unit' | 'shown' | 'min' | 'max'>
+
+/** Infinity and not-a-number as YAML, programs and people write them, with or without a unit. */
+const NOT_FINITE = /^[-+]?\.?(?:nan|inf|infinity|∞)(?![a-z])/i
 
 /** 95th percentile of the standard normal distribution. */
 const Z95 = 1.6448536269514722
@@ -50,7 +53,7 @@ const wrapped = (value: number | null): Read<number> | null => (value === null ?
 
 /** A single number in SI, inside its limits. */
 export function readNumber(key: Limits, tree: ScalarTree, path: string, { faults }: Reading): number | null {
-  if (tree.is === 'number' && !/\d/.test(tree.text)) {
+  if (NOT_FINITE.test(tree.text.trim())) {
     faults.push(faultAt(tree.place, 'number.not-finite', tree.text, limitsText(key), 'write a finite number'))
     return null
   }
@@ -70,21 +73,26 @@ export function readNumber(key: Limits, tree: ScalarTree, path: string, { faults
     return null
   }
   if (read.value < key.min || read.value > key.max) {
-    const remedy =
-      read.value <= 0 && key.min > 0
-        ? 'the value must be above zero'
-        : 'check the prefix and the power of ten'
-    faults.push(faultAt(tree.place, 'number.out-of-range', tree.text, limitsText(key), remedy))
+    faults.push(
+      faultAt(tree.place, 'number.out-of-range', tree.text, limitsText(key), outsideRemedy(key, read.value)),
+    )
     return null
   }
   return read.value
 }
 
-const limitsText = (key: Limits): string =>
-  `${formatQuantity(key.min, key.unit, key.shown)} to ${formatQuantity(key.max, key.unit, key.shown)}`
+function outsideRemedy({ unit, min, max }: Limits, value: number): string {
+  if (value < 0 && -value >= min && -value <= max) return 'leave the minus sign out'
+  if (value <= 0 && min > 0) return 'the value must be above zero'
+  return unit === '1' ? 'check the value and its power of ten' : 'check the prefix and the power of ten'
+}
+
+const limitsText = (key: Limits): string => formatLimits(key.min, key.max, key.unit, key.shown)
 
 const exampleText = (key: Limits): string =>
-  key.unit === '1' ? 'a number' : `a number with a unit such as ${key.shown ?? key.unit}`
+  key.unit === '1'
+    ? `a number${key.shown === undefined ? '' : `, or one in ${key.shown}`}`
+    : `a number with a unit such as ${key.shown ?? key.unit}`
 
 function unitFault(fault: QuantityFault, key: Limits, tree: ScalarTree, path: string) {
   const due = exampleText(key)
@@ -117,9 +125,12 @@ function unitFault(fault: QuantityFault, key: Limits, tree: ScalarTree, path: st
       return faultAt(
         tree.place,
         'unit.wrong-kind',
-        `${tree.text}`,
+        tree.text,
         due,
-        fault.hint ?? `give \`${path}\` in a unit of the kind of ${key.shown ?? key.unit}`,
+        fault.hint ??
+          (key.unit === '1'
+            ? `give \`${path}\` without a unit`
+            : `give \`${path}\` in ${key.shown ?? key.unit} or a multiple of it`),
       )
   }
 }
@@ -148,7 +159,7 @@ function readUncertain(key: QuantityKey, tree: MapTree, path: string, reading: R
       faultAt(
         tree.place,
         'uncertain.order',
-        'values out of order',
+        membersText(tree, ['low', 'typical', 'high']),
         'low ≤ typical ≤ high',
         'put the smallest value under `low`',
       ),
@@ -157,6 +168,13 @@ function readUncertain(key: QuantityKey, tree: MapTree, path: string, reading: R
   }
   return { value: spread.typical, note: { spread } }
 }
+
+/** Members of a mapping as written, for a message. */
+export const membersText = (tree: MapTree, names: readonly string[]): string =>
+  names
+    .filter((name) => tree.entries.has(name))
+    .map((name) => `${name} ${inWords(tree.entries.get(name)!.value)}`)
+    .join(', ')
 
 /** A number under a key of a mapping. */
 export function readMember(
@@ -173,7 +191,7 @@ export function readMember(
     faultAt(
       value.place,
       'number.unreadable',
-      value.kind === 'scalar' ? 'nothing' : `a ${value.kind}`,
+      inWords(value),
       exampleText(key),
       `write a number for \`${path}.${name}\``,
     ),
@@ -191,9 +209,8 @@ function threeValues(key: QuantityKey, tree: MapTree, path: string, reading: Rea
 
 function gaussian(key: QuantityKey, tree: MapTree, path: string, reading: Reading): Spread | null {
   const mean = readMember(key, tree, 'mean', path, reading)
-  // A spread of a temperature is a difference, for which an offset would be wrong: it is read in kelvin.
   const sigma = readMember(
-    { unit: key.unit, min: 0, max: key.max - Math.min(0, key.min) },
+    { unit: sigmaUnit(key.unit, tree), min: 0, max: key.max - Math.min(0, key.min) },
     tree,
     'sigma',
     path,
@@ -206,12 +223,18 @@ function gaussian(key: QuantityKey, tree: MapTree, path: string, reading: Readin
     faultAt(
       tree.place,
       'number.out-of-range',
-      'a spread that leaves the limits',
+      `${formatLimits(spread.low, spread.high, key.unit, key.shown)} as 5th and 95th percentile`,
       limitsText(key),
       'lower `sigma`, or give {low, typical, high}',
     ),
   )
   return null
+}
+
+/** The spread of a level such as −228 dBc/Hz is a ratio, in dB; people also write it in the unit of the level. */
+function sigmaUnit(unit: string, tree: MapTree): string {
+  const value = tree.entries.get('sigma')?.value
+  return unit.startsWith('dB') && value?.kind === 'scalar' && /dB\s*$/.test(value.text) ? 'dB' : unit
 }
 
 /** `[low, high]`, the lower first. */
@@ -222,8 +245,7 @@ export function readRange(
   reading: Reading,
 ): Read<readonly [number, number]> | null {
   if (tree.kind !== 'list' || tree.items.length !== 2 || tree.items.some(({ kind }) => kind !== 'scalar')) {
-    const found =
-      tree.kind === 'scalar' ? tree.text : tree.kind === 'list' ? `${tree.items.length} values` : 'a mapping'
+    const found = tree.kind === 'list' ? `${tree.items.length} values` : inWords(tree)
     reading.faults.push(
       faultAt(
         tree.place,
@@ -242,7 +264,7 @@ export function readRange(
     faultAt(
       tree.place,
       'range.form',
-      'the higher value first',
+      `[${tree.items.map(inWords).join(', ')}]`,
       'the lower value first',
       'swap the two values',
     ),

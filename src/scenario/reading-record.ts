@@ -1,6 +1,7 @@
 import { faultAt } from './fault.ts'
+import { nearest } from './nearest.ts'
 import type { Read, Reading } from './reading.ts'
-import { readMember } from './reading-quantity.ts'
+import { membersText, readMember } from './reading-quantity.ts'
 import type { QuantityKey } from './schema.ts'
 import type { MapTree, Tree } from './tree.ts'
 
@@ -29,8 +30,10 @@ export function readRecord(
     return null
   }
   for (const [name, { at }] of tree.entries) {
-    if (!RECORD.includes(name))
-      faults.push(faultAt(at, 'key.unknown', `\`${name}\` under \`${path}\``, RECORD.join(', '), 'remove it'))
+    if (RECORD.includes(name)) continue
+    const near = nearest(name, RECORD)
+    const remedy = near === null ? 'remove it' : `did you mean \`${near}\`?`
+    faults.push(faultAt(at, 'key.unknown', `\`${name}\` under \`${path}\``, RECORD.join(', '), remedy))
   }
   const value = readMember(key, tree, 'value', path, reading)
   const source = textOf(tree, 'source')
@@ -67,7 +70,7 @@ export function readRecord(
       faultAt(
         tree.place,
         'uncertain.order',
-        'values out of order',
+        membersText(tree, ['low', 'value', 'high']),
         'low ≤ value ≤ high',
         'put the smallest value under `low`',
       ),

@@ -1,12 +1,13 @@
 import { type Document, LineCounter, parseDocument } from 'yaml'
 import { type Fault, faultAt, type Place } from './fault.ts'
+import { deepNesting } from './nesting.ts'
 import type { Tree } from './tree.ts'
 import { DEEPEST, tooDeep, walkDocument } from './yaml-walk.ts'
 
-const LARGEST = 1024 * 1024
-/** Codes of `[` and `{`; those of `]` and `}` are two higher. */
-const OPEN_LIST = 0x5b
-const OPEN_MAP = 0x7b
+/** In characters: a hundred times what a person writes, and read in moments even when every character is a fault. */
+const LARGEST = 256 * 1024
+/** Levels that are handed to the parser: well within its stack, and beyond what brackets in quotes add up to. */
+const DEEPEST_PARSED = 4 * DEEPEST
 /** A text that is no YAML breaks on every line; the first few faults tell it. */
 const MOST_SYNTAX_FAULTS = 20
 
@@ -25,7 +26,10 @@ export function yamlTree(
   const refused = refusal(text, whole)
   if (refused !== null) return { tree: null, faults: [refused] }
   const lines = new LineCounter()
-  const document = parsed(text.replace(/^\uFEFF/, ''), lines)
+  const plain = text.replace(/^\uFEFF/, '')
+  const levels = deepNesting(plain, DEEPEST_PARSED)
+  if (levels !== null) return { tree: null, faults: [tooDeep(placeIn(plain, levels[DEEPEST + 1]!, file))] }
+  const document = parsed(plain, lines)
   if (document === null) return { tree: null, faults: [tooDeep(whole)] }
   const placeOf = (offset: number): Place => {
     const { line, col } = lines.linePos(offset)
@@ -39,22 +43,26 @@ export function yamlTree(
   return walkDocument(document, placeOf, whole)
 }
 
+function placeIn(text: string, offset: number, file: string): Place {
+  const before = text.slice(0, offset).split('\n')
+  return { file, line: before.length, column: before.at(-1)!.length + 1 }
+}
+
 function refusal(text: string, whole: Place): Fault | null {
   if (text.length > LARGEST) {
     return faultAt(
       whole,
       'file.too-large',
       `${text.length} characters`,
-      `at most ${LARGEST}`,
+      `at most ${LARGEST} characters`,
       'keep bulk data in files of their own',
     )
   }
   // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what is looked for
   const strange = text.search(/[\u0000-\u0008\u000e-\u001f\ufffd]/)
   if (strange >= 0) {
-    const before = text.slice(0, strange).split('\n')
     return faultAt(
-      { ...whole, line: before.length, column: before.at(-1)!.length + 1 },
+      placeIn(text, strange, whole.file),
       'file.binary',
       `a byte that is no text (${text.charCodeAt(strange).toString(16).padStart(4, '0')} hex)`,
       'UTF-8 text',
@@ -74,7 +82,6 @@ const emptyFile = (whole: Place): Fault =>
   )
 
 function parsed(text: string, lineCounter: LineCounter): Document.Parsed | null {
-  if (deepestBracket(text) > DEEPEST * 4) return null
   try {
     return parseDocument(text, {
       lineCounter,
@@ -88,17 +95,6 @@ function parsed(text: string, lineCounter: LineCounter): Document.Parsed | null 
   } catch {
     return null
   }
-}
-
-/** How deep brackets nest, so that the parser is never sent down a bottomless text. */
-function deepestBracket(text: string): number {
-  let [depth, deepest] = [0, 0]
-  for (let k = 0; k < text.length; k++) {
-    const sign = text.charCodeAt(k)
-    if (sign === OPEN_LIST || sign === OPEN_MAP) deepest = Math.max(deepest, ++depth)
-    else if (sign === OPEN_LIST + 2 || sign === OPEN_MAP + 2) depth--
-  }
-  return deepest
 }
 
 function syntaxFault(code: string, message: string, place: Place): Fault {

@@ -117,7 +117,8 @@ describe('checks of the divider', () => {
     expect(asked(lifted)).toBe(true)
     const found = outcomeOf(lifted, divider, 'stress')
     expect(found.required).toBeCloseTo(1.1 * 0.95, 12)
-    expect(found.available).toBeCloseTo(1.2 - 0.12, 12)
+    // The clock pair keeps three thermal voltages above the tail.
+    expect(found.available).toBeCloseTo(1.2 - 0.12 - (3 * 1.380649e-23 * 300.15) / 1.602176634e-19, 12)
   })
 
   it('law: at the reported design point the device is 1 + guard times as fast as its own load demands', () => {

@@ -17,7 +17,9 @@ const given = (over: Overrides = {}) =>
 function works(over: Overrides, core_voltage: number, at: ReturnType<typeof pointsOf>[number]): boolean {
   const here = given({ ...over, supply: { core_voltage } })
   const { nmos, pmos, V_core, settings } = benchAt(here, at, PLAIN)
-  const { n, p } = inverterChain(benchAt(here, at, PLAIN)).here
+  const chain = inverterChain(benchAt(here, at, PLAIN))
+  if ('unknown' in chain) throw new Error(chain.unknown)
+  const { n, p } = chain.here
   const swing = inverterSwingSupply.run(
     saturationAt(nmos, n, PLAIN),
     saturationAt(pmos, p, PLAIN),

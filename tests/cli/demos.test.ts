@@ -52,6 +52,7 @@ const ALIASES: Readonly<Record<string, readonly string[]>> = {
   'oscillator.startup_gain': ['required'],
   'oscillator.tank_q': ['Q_lo', 'Q_hi'],
   error_ratio: ['SER'],
+  'supply.device_limit': ['required'],
 }
 
 /** Inputs said to come from a key that only happens to have the same value. */

@@ -30,16 +30,22 @@ const PROVOKED: readonly Provoked[] = [
     link({ include: '[b.yaml]' }),
     { 'b.yaml': 'include: [§c.yaml]' },
   ],
-  ['file.too-large', 'beyond 1 MiB', `§# ${'x'.repeat(2 ** 20)}`],
+  ['file.too-large', 'beyond 256 Ki characters', `§# ${'x'.repeat(2 ** 18)}`],
   ['file.empty', 'nothing', '§'],
   ['file.empty', 'only a comment', '§# nothing yet\n'],
-  ['file.binary', 'a null byte', '§title: a\u0000b'],
+  ['file.binary', 'a null byte', 'format: 1\ntitle: a§\u0000b'],
+  ['file.binary', 'an escape', 'format: 1\ntitle: §\u001b[2J'],
   ['yaml.syntax', 'a tab', 'format: 1\n§\ttitle: x\n'],
   ['yaml.syntax', 'an open bracket', 'format: 1\nnodes: [P28\n§'],
   ['yaml.duplicate-key', 'at the top', link({}, '§title: Again\n')],
   ['yaml.duplicate-key', 'inside a group', link({}, 'clock: {fan_out: 1, §fan_out: 2}\n')],
   ['yaml.too-deep', 'indentation', levels(40)],
-  ['yaml.too-deep', 'brackets', `§${'['.repeat(100_000)}`],
+  ['yaml.too-deep', 'open brackets', `${'['.repeat(33)}§${'['.repeat(100_000)}`],
+  ['yaml.too-deep', 'closed brackets', `${'['.repeat(33)}§${'['.repeat(1e5)}${']'.repeat(1e5 + 33)}`],
+  ['yaml.too-deep', 'braces', `${'{a: '.repeat(33)}§${'{a: '.repeat(100)}${'}'.repeat(133)}`],
+  // Deep lists on one line once ended the process, beyond what can be caught.
+  ['yaml.too-deep', 'lists on one line', `${'- '.repeat(33)}§${'- '.repeat(3000)}`],
+  ['yaml.too-deep', 'keys on one line', `${'? '.repeat(33)}§${'? '.repeat(100_000)}`],
   // The list is the first value and x number k the (k + 1)st, so the 50 000th x passes the limit.
   ['yaml.aliases', 'more values than the limit', `[${'x,'.repeat(49_999)}§x,x]`],
   ['yaml.alias-unknown', 'no anchor', link({ title: '§*nowhere' })],
@@ -51,6 +57,8 @@ const PROVOKED: readonly Provoked[] = [
   ['shape.list', 'a mapping for a list', link({ examine: '§{driver: yes}' })],
   ['shape.list', 'no options', link({ options: '§[]' })],
   ['shape.text', 'a list for a text', link({ title: '§[a, b]' })],
+  ['shape.text', 'an empty title', link({ title: '§""' })],
+  ['shape.text', 'a list entry without text', link({ nodes: '[P28, §~]' })],
   ['key.unknown', 'at the top', link({}, '§modulaton: PAM-2\n')],
   ['key.unknown', 'in a group', link({ receiver: '{§dfe_tap: 1}' })],
   ['key.unknown', 'in an option', link({ options: '[{id: a, §date_rate: 1}]' })],
@@ -58,6 +66,7 @@ const PROVOKED: readonly Provoked[] = [
   ['key.unknown', 'of a machine', link({}, '§__proto__: {polluted: 1}\n')],
   ['key.unknown', 'in a record of a node', own, node('{value: 30 nm, source: us, §unit: nm}')],
   ['key.missing', 'of the head', link({ format: null, title: '§A lane' }).replace('title: §', '§title: ')],
+  ['key.missing', 'of a node', own, { 'own.yaml': '§format: 1\nid: OWN\nbased_on: P28\n' }],
   ['key.missing', 'of a link', link({ block: '§link', clocking: null })],
   ['key.missing', 'blanked by an option', link({ options: '[{id: a, data_rate: §null}]' })],
   ['key.missing', 'of a section', link({ loop: '§{bandwidth: 1 MHz}' })],
@@ -77,9 +86,12 @@ const PROVOKED: readonly Provoked[] = [
   ],
   ['number.not-finite', 'infinity', link({ guard: '§.inf' })],
   ['number.not-finite', 'not a number', link({ guard: '§.nan' })],
+  ['number.not-finite', 'a word for it with a unit', link({ clock: '{frequency: §NaN GHz}' })],
+  ['number.not-finite', 'in a node', own, node('{value: §.inf, source: us}')],
   ['number.not-finite', 'beyond what a number can hold', link({ guard: '§1e999' })],
   ['number.out-of-range', 'negative', link({ error_ratio: '§-1e-6' })],
   ['number.out-of-range', 'zero', link({ power_budget: '§0 W' })],
+  ['number.out-of-range', 'another format', link({ format: '§2' })],
   ['number.out-of-range', 'absurd', link({ data_rate: '§56e15 b/s' })],
   ['number.out-of-range', 'a spread beyond the limits', link({ power_budget: '§{mean: 1 W, sigma: 1 W}' })],
   ['number.not-whole', 'a fraction', link({ receiver: '{dfe_taps: §1.5}' })],
@@ -129,6 +141,7 @@ const PROVOKED: readonly Provoked[] = [
   ],
   ['source.missing', 'a bare value in a node', own, node('§30 nm')],
   ['source.missing', 'a record without source', own, node('§{value: 30 nm}')],
+  ['source.missing', 'a record with an empty source', own, node('§{value: 30 nm, source: ""}')],
   ['rule.form', 'a call of something else', link({ demand: '{formulas: {driver: §"evaluate(1)"}}' })],
   ['rule.form', 'an assignment', link({ demand: '{formulas: {driver: §"k = 3"}}' })],
   ['oscillator.missing', 'in a clock block', 'format: 1\ntitle: A clock\nblock: §clock\nnodes: [P28]\n'],
@@ -200,6 +213,10 @@ describe('remedies', () => {
     [link({ data_rate: '56' }), '56 Gb/s'],
     [link({}, 'modulaton: PAM-2\n'), '`modulation`'],
     [link({ modulation: 'PAM4' }), '`PAM-4`'],
+    [link({ clocking: 'half' }), '`half-rate`'],
+    [link({ format: '2' }), '`format: 1`'],
+    [link({ channel: '{loss: -22 dB, at: 14 GHz}' }), 'minus sign'],
+    [link({ power_budget: '1 V' }), 'in mW or a multiple of it'],
     [link({ nodes: '[P29]' }), '`P28`'],
     [link({ process: '{temperature: [-40 C, 125 C]}' }), 'coulomb'],
     [link({ options: '[{id: a, nodes: [F16]}]' }), 'move it to the top'],
@@ -208,7 +225,67 @@ describe('remedies', () => {
   })
 })
 
-it('all faults of a file are told in one run, in the order of the text', async () => {
+describe('one run', () => {
+  it('tells faults of ten kinds at their places, in the order of the text', async () => {
+    const text = `format: 1
+title: A lane
+block: link
+data_rate: 112 GB/s
+modulation: PAM4
+clocking: half-rate
+error_ratio: 0
+gaurd: 10 %
+oscillator: {kind: LC, range: [15 GHz, 13 GHz], tank_q: {low: 9, high: 12}}
+loop: {reference: 156.25, floor: .nan}
+nodes: [P28, P29]
+options:
+  - {id: a}
+  - {id: a}
+`
+    const told = (await faultsOf(text)).map(({ code, line, column }) => [code, line, column])
+    expect(told).toEqual([
+      ['unit.wrong-kind', 4, 12],
+      ['choice.unknown', 5, 13],
+      ['number.out-of-range', 7, 14],
+      ['key.unknown', 8, 1],
+      ['range.form', 9, 31],
+      ['uncertain.form', 9, 57],
+      ['unit.missing', 10, 19],
+      ['number.not-finite', 10, 34],
+      ['node.unknown', 11, 14],
+      ['option.duplicate', 14, 10],
+    ])
+  })
+
+  it('tells the faults of a node whose base is missing, and nothing that the base might have held', async () => {
+    const files = { 'own.yaml': 'format: 1\nid: OWN\nbased_on: P29\nnmos:\n  L: 30 nm\n' }
+    const told = (await faultsOf(link({ nodes: '[own.yaml]' }), files)).map(({ code, line }) => [code, line])
+    expect(told).toEqual([
+      ['node.unknown', 3],
+      ['source.missing', 5],
+    ])
+  })
+
+  it('tells nothing missing that a file which cannot be read might have held', async () => {
+    const text = link({ include: '[none.yaml]', data_rate: null, title: null, guard: '-1' })
+    expect((await faultsOf(text)).map(({ code }) => code).sort()).toEqual([
+      'file.missing',
+      'number.out-of-range',
+    ])
+  })
+
+  it('tells a fault once that two nodes share', async () => {
+    const files = {
+      'b.yaml': 'format: 1\nid: B\nlabel: B\nbased_on: d.yaml\n',
+      'c.yaml': 'format: 1\nid: C\nlabel: C\nbased_on: d.yaml\n',
+      'd.yaml': 'based_on: P28\nfo4: 13 ps\n',
+    }
+    const told = await faultsOf(link({ nodes: '[b.yaml, c.yaml]' }), files)
+    expect(told).toMatchObject([{ code: 'source.missing', file: 'd.yaml', line: 2, column: 6 }])
+  })
+})
+
+it('faults of options, nodes and head are told together', async () => {
   const text = link(
     {
       data_rate: '112 GB/s',

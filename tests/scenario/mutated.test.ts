@@ -78,17 +78,31 @@ function expectTold(faults: readonly Fault[], text: string): void {
   }
 }
 
-it('law: a damaged scenario is read or its faults are told; nothing is thrown', async () => {
+/** Paths of numbers that are infinite or not a number, anywhere inside. */
+function notFinite(value: unknown, path = ''): readonly string[] {
+  if (typeof value === 'number') return Number.isFinite(value) ? [] : [path]
+  if (value === null || typeof value !== 'object') return []
+  return Object.entries(value).flatMap(([name, inner]) => notFinite(inner, `${path}.${name}`))
+}
+
+it('law: a damaged scenario is read or its faults are told; nothing is thrown or takes long', async () => {
   const roll = dice(20270301)
-  let refused = 0
-  for (let k = 0; k < 400; k++) {
-    const text = mutated(demo(['lane-56', 'clock-generator', 'lane-224'][k % 3]!), roll)
+  const demos = ['lane-56', 'clock-generator', 'lane-224', 'low-cost-lane'].map(demo)
+  let [refused, longest] = [0, 0]
+  for (let k = 0; k < 2000; k++) {
+    const text = mutated(demos[k % demos.length]!, roll)
+    const start = performance.now()
     const read = await readScenario(text, 'a.yaml', accessTo())
-    if (read.ok) continue
-    refused++
-    expectTold(read.faults, text)
+    longest = Math.max(longest, performance.now() - start)
+    if (read.ok) expect(notFinite(read.value)).toEqual([])
+    else {
+      refused++
+      expectTold(read.faults, text)
+    }
   }
-  expect(refused).toBeGreaterThan(200)
+  expect(refused).toBeGreaterThan(1000)
+  expect(refused).toBeLessThan(1950)
+  expect(longest).toBeLessThan(2000)
 })
 
 it('law: a damaged node file is read or its faults are told; nothing is thrown', () => {
@@ -98,9 +112,12 @@ it('law: a damaged node file is read or its faults are told; nothing is thrown',
   for (let k = 0; k < 150; k++) {
     const text = mutated(whole, roll)
     const read = readNode(text, 'n.yaml', accessTo())
-    if (read.ok) continue
-    refused++
-    expectTold(read.faults, text)
+    if (read.ok) expect(notFinite(read.value)).toEqual([])
+    else {
+      refused++
+      expectTold(read.faults, text)
+    }
   }
   expect(refused).toBeGreaterThan(60)
+  expect(refused).toBeLessThan(149)
 })

@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest'
+import { loadScenario } from '../../src/nodes/load.ts'
 import type { Provenance, Scenario } from '../../src/scenario/checked.ts'
 import { readScenario } from '../../src/scenario/read.ts'
 import { starters } from '../../src/scenario/starters.ts'
-import { accessTo, demo, faultsOf, link } from './scenarios.ts'
+import { ALL_CLASSES, accessTo, demo, faultsOf, link } from './scenarios.ts'
 
 async function scenario(text: string, files: Readonly<Record<string, string>> = {}): Promise<Scenario> {
   const read = await readScenario(text, 'a.yaml', accessTo(files))
@@ -71,6 +72,19 @@ describe('uncertain values', () => {
     expect(typical - low).toBeCloseTo(0.02 * 1.6448536269514722, 14)
   })
 
+  it('law: the spread of a level is a ratio, in dB', async () => {
+    const floor = (sigma: string) =>
+      link({ loop: `{reference: 100 MHz, floor: {mean: -228 dBc/Hz, sigma: ${sigma}}}` })
+    const { low, typical, high } = at(await scenario(floor('2 dB')), 'loop.floor').spread!
+    expect([low, typical, high]).toEqual([
+      expect.closeTo(-228 - 2 * 1.6448536269514722, 12),
+      -228,
+      expect.closeTo(-228 + 2 * 1.6448536269514722, 12),
+    ])
+    expect(at(await scenario(floor('2 dBc/Hz')), 'loop.floor').spread).toEqual({ low, typical, high })
+    expect(await faultsOf(floor('2 dBm'))).toMatchObject([{ code: 'unit.wrong-kind' }])
+  })
+
   it('an option replaces an uncertain value whole', async () => {
     const text = link(
       { power_budget: '{low: 200 mW, typical: 250 mW, high: 310 mW}' },
@@ -107,6 +121,20 @@ describe('options', () => {
 
   it('without options there is one, called base', async () => {
     expect((await scenario(link())).options.map(({ id }) => id)).toEqual(['base'])
+  })
+
+  it('examine and the cost index are read as given, by option and by node', async () => {
+    const given = await scenario(
+      link(
+        { examine: '[sampler, driver]', cost_index: '{P28: 1.5, F16: 2e0}' },
+        'options: [{id: a}, {id: b, examine: divider}]\n',
+      ),
+    )
+    expect(given.options.map(({ settings }) => settings.examine)).toEqual([
+      ['sampler', 'driver'],
+      ['divider'],
+    ])
+    expect(given.head.cost_index).toEqual({ P28: 1.5, F16: 2 })
   })
 
   it('what every option gives need not stand above', async () => {
@@ -174,63 +202,16 @@ describe('include', () => {
     expect(await faultsOf(link({ nodes: null, include: '[shared/rates.yaml]' }), files)).toEqual([])
   })
 
+  it('a file may be named by a number, like any other', async () => {
+    const { options } = await scenario(link({ include: '[7]' }), { '7': 'guard: 20 %\n' })
+    expect(options[0]!.settings.guard).toBe(0.2)
+  })
+
   it('a fault in an included file names that file', async () => {
     const [fault] = await faultsOf(link({ pads: null, include: '[b.yaml]' }), {
       'b.yaml': 'pads:\n  cdm_current: 3 V\n',
     })
     expect(fault).toMatchObject({ file: 'b.yaml', line: 2, column: 16, code: 'unit.wrong-kind' })
-  })
-})
-
-describe('rule formulas', () => {
-  const rule = (text: string) => link({ demand: `{formulas: {driver: "${text}"}}` })
-  const inputs = { f_op: 14e9, f_B: 28e9, f_N: 14e9, f_ck: 7e9, f_osc: 14e9, beta: 1.57, k: 3 }
-
-  it.each([
-    ['3 * f_op / beta', (3 * 14e9) / 1.57],
-    ['k*f_op^2/f_B', (3 * 14e9 ** 2) / 28e9],
-    ['max(2*f_N, sqrt(f_B*f_ck), k*min(f_op, f_ck))', 28e9],
-    ['-(-f_osc) + 2^3^2', 14e9 + 512],
-    ['abs(f_ck - f_osc) * log10(100) * exp(0) * log(exp(1))', 14e9],
-  ])('law: %s', async (text, value) => {
-    const { run } = (await scenario(rule(text))).options[0]!.rules.driver!
-    expect(run(inputs)).toBeCloseTo(value, -2)
-  })
-
-  it.each([
-    'f_op.constructor',
-    "f_op['constructor']",
-    'constructor',
-    'cos(f_op)',
-    'import({}, {})',
-    'createUnit(k)',
-    'f(x) = x',
-    'k = 4',
-    '[1, 2]',
-    '1:3',
-    '2 f_op',
-    '5 cm',
-    'f_op > 3 ? 1 : 2',
-    'f_op; k',
-    'f_op!',
-    'k % 2',
-    'k mod 2',
-    'pi * f_op',
-    'i',
-    'true',
-    'sqrt.constructor(1)',
-    '(sqrt)(4)()',
-    'max()',
-    'sqrt(1, 2)',
-    '1/0 * f_op',
-    '-f_op',
-    '',
-    'f_op *',
-    `${'('.repeat(60)}f_op${')'.repeat(60)}`,
-    `f_op${' + 1'.repeat(60)}`,
-  ])('refuses %s', async (text) => {
-    const found = await faultsOf(rule(text))
-    expect(found.map(({ code }) => code)).toEqual([text.length > 200 ? 'text.too-long' : 'rule.form'])
   })
 })
 
@@ -265,6 +246,18 @@ describe('forms of a file', () => {
     expect(({} as Record<string, unknown>).polluted).toBeUndefined()
   })
 
+  it('a byte-order mark and CRLF shift no place', async () => {
+    const text = link({ data_rate: '56', nodes: '[P28, P29]' })
+    const places = async (one: string) =>
+      (await faultsOf(one)).map(({ code, line, column }) => [code, line, column])
+    const told = [
+      ['unit.missing', 4, 12],
+      ['node.unknown', 8, 14],
+    ]
+    expect(await places(text)).toEqual(told)
+    expect(await places(`\uFEFF${text.replaceAll('\n', '\r\n')}`)).toEqual(told)
+  })
+
   it('anchors and aliases stand for what they name', async () => {
     const given = await scenario(
       link({ power_budget: '&p 250 mW', options: '[{id: a}, {id: b, power_budget: *p}]' }),
@@ -274,16 +267,10 @@ describe('forms of a file', () => {
 })
 
 describe('texts that ship', () => {
-  it.each(Object.entries(starters))('the starter %s reads without fault', async (_name, text) => {
-    const own = text.replace(/^nodes: .*?(?=\s*#)/m, 'nodes: [P28]')
-    expect(await faultsOf(own)).toEqual([])
+  const demos = ['lane-56', 'lane-224', 'low-cost-lane', 'clock-generator']
+  const texts = [...Object.entries(starters), ...demos.map((name) => [name, demo(name)] as const)]
+  it.each(texts)('%s reads without fault, and so do its nodes', async (name, text) => {
+    const read = await loadScenario(text, name, accessTo({}, ALL_CLASSES))
+    expect(read.ok ? [] : read.faults).toEqual([])
   })
-
-  it.each(['lane-56', 'lane-224', 'low-cost-lane', 'clock-generator'])(
-    'the demo %s reads without fault',
-    async (name) => {
-      const read = await readScenario(demo(name), name, accessTo())
-      expect(read.ok ? [] : read.faults).toEqual([])
-    },
-  )
 })

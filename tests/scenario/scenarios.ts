@@ -1,4 +1,4 @@
-import { readFileSync } from 'node:fs'
+import { readdirSync, readFileSync } from 'node:fs'
 import { join, posix } from 'node:path'
 import { loadScenario } from '../../src/nodes/load.ts'
 import type { Fault } from '../../src/scenario/fault.ts'
@@ -6,9 +6,16 @@ import type { Access } from '../../src/scenario/tree.ts'
 
 const CLASSES = new URL('../../src/nodes/classes/', import.meta.url)
 
-/** Access to files given as texts by name, and to two of the built-in classes. */
-export function accessTo(files: Readonly<Record<string, string>> = {}): Access {
-  const ids = ['F16', 'P28']
+/** Ids of every built-in class. */
+export const ALL_CLASSES: readonly string[] = readdirSync(CLASSES)
+  .filter((name) => name.endsWith('.yaml'))
+  .map((name) => name.slice(0, -'.yaml'.length))
+
+/** Access to files given as texts by name, and to some of the built-in classes. */
+export function accessTo(
+  files: Readonly<Record<string, string>> = {},
+  ids: readonly string[] = ['F16', 'P28'],
+): Access {
   return {
     read: (path, from) => {
       const file = posix.join(posix.dirname(from), path)

@@ -152,6 +152,15 @@ export const optionKeys = {
       min: 0.3,
       max: 5,
     }),
+    lift: quantity({
+      meaning:
+        "Step of the stacked stages' supply above the supply that they would have: an analogue supply a fixed step above core.",
+      symbol: 'V_lift',
+      unit: 'V',
+      shown: 'mV',
+      min: 0,
+      max: 1,
+    }),
     core_voltage: quantity({
       meaning: "Nominal core supply, when it is not the node's own.",
       symbol: 'V_nom',
