@@ -28,6 +28,34 @@ export interface KnownLeaf extends Given {
   readonly value: number
 }
 
+/** Given numbers by value, so that a recorder finds the origin of an input at once. Made once, used by many. */
+export class KnownLeaves {
+  readonly #byValue = new Map<number, KnownLeaf[]>()
+  readonly #below: KnownLeaves | null
+
+  /** The leaves given, and behind them those of another set. */
+  constructor(leaves: readonly KnownLeaf[], below: KnownLeaves | null = null) {
+    this.#below = below
+    for (const leaf of leaves) {
+      const alike = this.#byValue.get(leaf.value)
+      if (alike === undefined) this.#byValue.set(leaf.value, [leaf])
+      else alike.push(leaf)
+    }
+  }
+
+  /** The leaf of this symbol and value. */
+  named(symbol: string, value: number): KnownLeaf | undefined {
+    return (
+      this.#byValue.get(value)?.find((leaf) => leaf.symbol === symbol) ?? this.#below?.named(symbol, value)
+    )
+  }
+
+  /** Any leaf of this value. */
+  alike(value: number): KnownLeaf | undefined {
+    return this.#byValue.get(value)?.[0] ?? this.#below?.alike(value)
+  }
+}
+
 /** Thrown when an input cannot be traced to an earlier step or a known leaf: a fault of the program. */
 export class DerivationGap extends Error {
   override name = 'DerivationGap'
@@ -39,10 +67,12 @@ type Draft = Omit<Step, 'id' | 'from'> & { from: Record<string, number> }
 export class Recorder implements Trace {
   readonly recording = true
   readonly #drafts: Draft[] = []
-  readonly #known: readonly KnownLeaf[]
+  /** Places of the drafts by value, in the order written. */
+  readonly #places = new Map<number, number[]>()
+  readonly #known: KnownLeaves
   readonly #shown: number[] = []
 
-  constructor(known: readonly KnownLeaf[]) {
+  constructor(known: KnownLeaves) {
     this.#known = known
   }
 
@@ -92,17 +122,14 @@ export class Recorder implements Trace {
 
   /** Where the step with this value stands; prefers one of the same symbol, then the latest. */
   #find(name: string, value: number): number {
-    let byValue = -1
-    for (let k = this.#drafts.length - 1; k >= 0; k--) {
-      const draft = this.#drafts[k]!
-      if (!Object.is(draft.value, value)) continue
-      if (draft.symbol === name) return k
-      if (byValue < 0) byValue = k
-    }
-    const named = this.#known.find((leaf) => leaf.symbol === name && Object.is(leaf.value, value))
+    const places = this.#places.get(value) ?? []
+    const ofSymbol = places.findLast((k) => this.#drafts[k]!.symbol === name)
+    if (ofSymbol !== undefined) return ofSymbol
+    const named = this.#known.named(name, value)
     if (named !== undefined) return this.#adopt(named)
-    if (byValue >= 0) return byValue
-    const alike = this.#known.find((leaf) => Object.is(leaf.value, value))
+    const latest = places.at(-1)
+    if (latest !== undefined) return latest
+    const alike = this.#known.alike(value)
     if (alike !== undefined) return this.#adopt(alike)
     throw new DerivationGap(`no earlier step or known value yields ${name} = ${value}`)
   }
@@ -114,10 +141,14 @@ export class Recorder implements Trace {
   }
 
   #push(draft: Omit<Draft, 'from' | 'inputs'>, inputs: Readonly<Record<string, number>>): void {
-    if (this.#drafts.some((known) => same(known, draft, inputs))) return
+    const places = this.#places.get(draft.value)
+    if (places?.some((k) => same(this.#drafts[k]!, draft, inputs))) return
     const from: Record<string, number> = {}
     for (const [name, value] of Object.entries(inputs)) from[name] = this.#find(name, value)
-    this.#drafts.push({ ...draft, inputs: { ...inputs }, from })
+    const place = this.#drafts.push({ ...draft, inputs: { ...inputs }, from }) - 1
+    const alike = this.#places.get(draft.value)
+    if (alike === undefined) this.#places.set(draft.value, [place])
+    else alike.push(place)
   }
 
   /**
@@ -175,7 +206,6 @@ function same(
   draft: Omit<Draft, 'from' | 'inputs'>,
   inputs: Readonly<Record<string, number>>,
 ): boolean {
-  if (!Object.is(known.value, draft.value)) return false
   if (known.symbol !== draft.symbol || known.formula !== draft.formula) return false
   if (known.kind !== draft.kind || known.path !== draft.path || known.meaning !== draft.meaning) return false
   return Object.entries(inputs).every(([name, value]) => Object.is(known.inputs[name], value))

@@ -11,7 +11,7 @@ import { assumptionsOf } from './assumptions.ts'
 import { type FailingEnd, failingEnds } from './ends.ts'
 import { stepsOf } from './explain.ts'
 import { laterChecks, laterNotExamined, laterResults } from './later.ts'
-import { knownLeaves } from './leaves.ts'
+import { givenLeaves, knownLeaves } from './leaves.ts'
 import { outcomesAt, type Worst, worstOf } from './margins.ts'
 import { type CasePoints, casePoints } from './points.ts'
 import {
@@ -77,11 +77,11 @@ export function evaluateCase(given: Case, option: OptionInput, node: Node, about
   const worst = worstOf(given, asking, points)
   const typical = outcomesAt(given, asking, points.typical)
   const ends = failingEnds(given, asking, option.provenance)
+  const leaves = about.explain ? givenLeaves(option.provenance, node.provenance) : null
   const computed = flatChecks(asking).map(({ block, check }, k) => {
     const spec = asking.blocks[block]!.block
     const { at, outcome } = worst[k]!
-    const known = about.explain ? knownLeaves(option.provenance, node.provenance, at) : []
-    const steps = about.explain ? stepsOf(given, spec, check, at, known) : []
+    const steps = leaves === null ? [] : stepsOf(given, spec, check, at, knownLeaves(leaves, at))
     const { title, quantity, unit, sense, name } = spec.checks[check]!
     const result: CheckResult = {
       id: `${spec.id}.${name}`,

@@ -1,6 +1,6 @@
 import { benchAt, type Case } from '../blocks/bench.ts'
 import type { AnySubBlock } from '../blocks/sub-block.ts'
-import { type KnownLeaf, Recorder, type Step } from '../derivation/recorder.ts'
+import { type KnownLeaves, Recorder, type Step } from '../derivation/recorder.ts'
 import type { OperatingPoint } from '../device/conditions.ts'
 
 /**
@@ -13,7 +13,7 @@ export function stepsOf(
   block: AnySubBlock,
   check: number,
   at: OperatingPoint,
-  known: readonly KnownLeaf[],
+  known: KnownLeaves,
 ): readonly Step[] {
   const recorder = new Recorder(known)
   const [outcome] = block.outcomes(benchAt(given, at, recorder), [check])

@@ -1,15 +1,16 @@
-import type { KnownLeaf } from '../derivation/recorder.ts'
+import { type KnownLeaf, KnownLeaves } from '../derivation/recorder.ts'
 import { BOLTZMANN, CHARGE, type OperatingPoint } from '../device/conditions.ts'
 import type { Provenance } from '../scenario/checked.ts'
 
-/** Given numbers that a derivation may rest on: the option's, the node's, the operating point's and constants. */
-export function knownLeaves(
-  option: readonly Provenance[],
-  node: readonly Provenance[],
-  at: OperatingPoint,
-): readonly KnownLeaf[] {
+/** Given numbers that every derivation of a case may rest on: the option's, the node's, and constants. */
+export function givenLeaves(option: readonly Provenance[], node: readonly Provenance[]): KnownLeaves {
   const given = [...option, ...node].flatMap(leavesOf)
-  return [...given, ...given.flatMap(byPolarity), ...pointLeaves(at), BOLTZMANN, CHARGE]
+  return new KnownLeaves([...given, ...given.flatMap(byPolarity), BOLTZMANN, CHARGE])
+}
+
+/** The same with what an operating point adds. */
+export function knownLeaves(given: KnownLeaves, at: OperatingPoint): KnownLeaves {
+  return new KnownLeaves(pointLeaves(at), given)
 }
 
 function leavesOf(given: Provenance): readonly KnownLeaf[] {

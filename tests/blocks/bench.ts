@@ -9,7 +9,7 @@ import { type DeviceValues, type NodeValues, nodeKeys } from '../../src/nodes/ke
 import type { Provenance } from '../../src/scenario/checked.ts'
 import { optionKeys, type Settings } from '../../src/scenario/keys/index.ts'
 import type { Key, Keys } from '../../src/scenario/schema.ts'
-import { knownLeaves } from '../../src/verdict/leaves.ts'
+import { givenLeaves, knownLeaves } from '../../src/verdict/leaves.ts'
 
 /**
  * Test benches: nodes with the starting values of the built-in classes, settings at their defaults, and the walk
@@ -206,8 +206,10 @@ function placeOf(block: AnySubBlock, name: string): number {
  */
 export function walked(given: Case, block: AnySubBlock, name: string, at: OperatingPoint): readonly Step[] {
   const known = knownLeaves(
-    provenanceOf(optionKeys, given.settings as unknown as Record<string, unknown>, ''),
-    provenanceOf(nodeKeys as Keys, given.node as unknown as Record<string, unknown>, 'node'),
+    givenLeaves(
+      provenanceOf(optionKeys, given.settings as unknown as Record<string, unknown>, ''),
+      provenanceOf(nodeKeys as Keys, given.node as unknown as Record<string, unknown>, ''),
+    ),
     at,
   )
   const recorder = new Recorder(known)

@@ -4,7 +4,7 @@ import { Recorder } from '../../src/derivation/recorder.ts'
 import { PLAIN } from '../../src/derivation/trace.ts'
 import { cornerPoint, deviceAt, typicalPoint } from '../../src/device/conditions.ts'
 import { fo4At } from '../../src/device/fo4.ts'
-import { knownLeaves } from '../../src/verdict/leaves.ts'
+import { givenLeaves, knownLeaves } from '../../src/verdict/leaves.ts'
 import { builtInClass, CLASS_IDS } from '../nodes/built-in.ts'
 
 const here = (id: string, corner: 'slow' | 'typical' | 'fast', T: number, V?: number): number => {
@@ -49,7 +49,7 @@ describe('FO4 away from its datum', () => {
   test('recorded steps give the same bits and evaluate to their values (law)', () => {
     const node = builtInClass('F16')
     const at = cornerPoint(node.values, 'slow', 233.15, 0.05, 0.025)
-    const t = new Recorder(knownLeaves([], node.provenance, at))
+    const t = new Recorder(knownLeaves(givenLeaves([], node.provenance), at))
     const nmos = deviceAt(node.values.nmos, at, t)
     const delay = fo4At(node.values, nmos, deviceAt(node.values.nmos, typicalPoint(300), t), 0.8, t)
     const plain = deviceAt(node.values.nmos, at, PLAIN)
