@@ -11,15 +11,10 @@ export function answerOf(
 ): Answer {
   const named = (verdict: Verdict): readonly string[] =>
     cases.filter((one) => one.verdict === verdict).map(({ option, node }) => `${option} in ${node}`)
-  const sentence = [
-    headline(cases, options),
-    ...options.map((option) => optionSentence(option, cases, nodes)),
-    unknownSentence(cases),
-  ]
-    .filter((part) => part !== '')
-    .join(' ')
+  const byOption = options.map((option) => optionPart(option, cases, nodes)).join('; ')
+  const sentence = [headline(cases, options), `${byOption}.`, unknownSentence(cases)]
   return {
-    sentence,
+    sentence: sentence.filter((part) => part !== '').join(' '),
     passes: named('pass'),
     tight: named('tight'),
     fails: named('fail'),
@@ -28,27 +23,20 @@ export function answerOf(
 }
 
 function headline(cases: readonly CaseResult[], options: readonly { readonly id: string }[]): string {
-  const count = (verdict: Verdict): number => cases.filter((one) => one.verdict === verdict).length
+  const count = (verdict: Verdict): number => cases.filter((one) => computedVerdict(one) === verdict).length
   const parts = [
-    [count('pass'), 'pass'],
-    [count('tight'), 'are tight'],
-    [count('fail'), 'fail'],
-    [count('unknown'), 'cannot be decided yet'],
+    [count('pass'), 'pass', 'passes'],
+    [count('tight'), 'are tight', 'is tight'],
+    [count('fail'), 'fail', 'fails'],
+    [count('unknown'), 'have no computed check', 'has no computed check'],
   ] as const
   const said = parts
     .filter(([many]) => many > 0)
-    .map(([many, what]) => `${many} ${many === 1 ? singular(what) : what}`)
+    .map(([many, what, one]) => `${many} ${many === 1 ? one : what}`)
   const what = options.length === 1 ? 'nodes' : 'combinations of option and node'
-  return `Of ${cases.length} ${what}, ${listed(said)}.`
+  const open = cases.some(({ verdict }) => verdict === 'unknown') ? 'As far as computed, of' : 'Of'
+  return `${open} ${cases.length} ${what}, ${listed(said)}:`
 }
-
-const singular = (what: string): string =>
-  ({
-    pass: 'passes',
-    'are tight': 'is tight',
-    fail: 'fails',
-    'cannot be decided yet': 'cannot be decided yet',
-  })[what] ?? what
 
 /** Verdict of what could be computed: what a case would be without its unknown checks. */
 function computedVerdict(one: CaseResult): Verdict {
@@ -56,7 +44,7 @@ function computedVerdict(one: CaseResult): Verdict {
 }
 
 /** Where one option works, or what stops it where it comes closest. */
-function optionSentence(
+function optionPart(
   option: { readonly id: string },
   cases: readonly CaseResult[],
   nodes: readonly { readonly id: string }[],
@@ -65,18 +53,17 @@ function optionSentence(
   const inNodes = (verdict: Verdict): readonly string[] =>
     own.filter((one) => computedVerdict(one) === verdict).map(({ node }) => node)
   const [passes, tight] = [inNodes('pass'), inNodes('tight')]
-  const open = own.some(({ verdict }) => verdict === 'unknown') ? ' as far as computed' : ''
   if (passes.length > 0) {
-    return `${option.id} passes${open} in ${listed(passes)}${tight.length > 0 ? ` and is tight in ${listed(tight)}` : ''}.`
+    return `${option.id} passes in ${listed(passes)}${tight.length > 0 ? ` and is tight in ${listed(tight)}` : ''}`
   }
-  if (tight.length > 0) return `${option.id} is tight${open} in ${listed(tight)}.`
+  if (tight.length > 0) return `${option.id} is tight in ${listed(tight)}`
   const known = own.filter((one) => one.margin !== null)
-  if (known.length === 0) return `${option.id} has no computed check.`
+  if (known.length === 0) return `${option.id} has no computed check`
   const best = known.reduce((a, b) => (b.margin! > a.margin! ? b : a))
   const limit = best.checks.find(({ id }) => id === best.limitedBy)
   const where =
-    own.length === 1 ? `fails in ${best.node}` : `fails in every node; it comes closest in ${best.node}`
-  return `${option.id} ${where}, limited by ${limit?.title ?? 'an unknown check'} (margin ${best.margin!.toFixed(2)}).`
+    own.length === 1 ? `fails in ${best.node}` : `fails in every node, and comes closest in ${best.node}`
+  return `${option.id} ${where}, limited by ${limit?.title ?? 'an unknown check'} (margin ${best.margin!.toFixed(2)})`
 }
 
 function unknownSentence(cases: readonly CaseResult[]): string {
@@ -85,7 +72,9 @@ function unknownSentence(cases: readonly CaseResult[]): string {
       checks.filter(({ verdict }) => verdict === 'unknown').map(({ title }) => title),
     ),
   )
-  return asked.size === 0 ? '' : `Asked but unknown: ${listed([...asked])}.`
+  return asked.size === 0
+    ? ''
+    : `Asked but unknown, so that these cases are not decided: ${listed([...asked])}.`
 }
 
 /** "a", "a and b", "a, b and c". */

@@ -156,7 +156,7 @@ describe('the answer', () => {
     expect(answer.fails).toContain('quick in P180')
     expect(answer.sentence).toContain('slow passes in P28')
     expect(answer.sentence).toMatch(
-      /quick fails in every node; it comes closest in P28, limited by Clock buffers/,
+      /quick fails in every node, and comes closest in P28, limited by Clock buffers/,
     )
   })
 

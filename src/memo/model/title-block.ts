@@ -15,13 +15,17 @@ export function titleFacts({ scenario, tool, inputs }: Result): readonly Fact[] 
       text: scenario.block === 'link' ? 'link (SerDes lane)' : 'clock (PLL or clock generator)',
     },
     { label: 'Tool', text: clean(`${tool.name} ${tool.version}`) },
-    {
-      label: inputs.length > 1 ? 'Inputs (SHA-256)' : 'Input (SHA-256)',
-      text:
-        inputs.map(({ file, sha256 }) => `${shortFile(file)} ${sha256.slice(0, 12)}…`).join(', ') ||
-        'none recorded',
-    },
+    { label: 'Scenario (SHA-256)', text: inputLine(inputs) },
   ]
+}
+
+/** The scenario's own hash; the other files are listed with theirs at the end of the memo. */
+function inputLine(inputs: Result['inputs']): string {
+  const [scenario, ...others] = inputs
+  if (scenario === undefined) return 'none recorded'
+  const own = `${shortFile(scenario.file)} ${scenario.sha256.slice(0, 12)}…`
+  if (others.length === 0) return own
+  return `${own} and ${others.length} other ${others.length === 1 ? 'file' : 'files'}, see Inputs`
 }
 
 /** Room to write by hand. */
