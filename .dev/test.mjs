@@ -13,13 +13,15 @@ rmSync(report, { force: true })
 
 const tool = (path) => [process.execPath, `${root}node_modules/${path}`]
 const steps = [
-  ['types', ...tool('typescript/bin/tsc'), '--noEmit'],
+  ['types', ...tool('typescript/bin/tsc'), '--noEmit', '-p', `${root}.dev`],
   ['lint and format', ...tool('@biomejs/biome/bin/biome'), 'check', '--error-on-warnings', '.'],
   ['build', process.execPath, `${root}.dev/build.mjs`],
   [
     'tests',
     ...tool('vitest/vitest.mjs'),
     'run',
+    '--config',
+    `${root}.dev/vitest.config.ts`,
     '--reporter=default',
     '--reporter=json',
     `--outputFile.json=${report}`,

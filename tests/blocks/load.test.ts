@@ -113,3 +113,16 @@ describe('the current-mode load', () => {
     expect(evaluate(loadFactor.text.expression, inputs)).toBeCloseTo(l, 12)
   })
 })
+
+describe('stages that share a gain (values.json A08: Razavi 2003, ch. 5; R. P. Jindal 1987)', () => {
+  /** Bandwidth of n unpeaked stages of gain A in all, over the gain–bandwidth product of one. */
+  const bandwidth = (A: number, n: number): number =>
+    (stagePole.run(1, 1, A ** (1 / n), 1) * shrink(n, 'none')) / 1
+
+  it('published: a gain of 10 is widest over four stages', () => {
+    const widths = [1, 2, 3, 4].map((n) => bandwidth(10, n))
+    expect(widths.indexOf(Math.max(...widths))).toBe(3)
+    // BWtot/GBW = A^(-1/n) sqrt(2^(1/n) - 1), the closed form of A08, at n = 4.
+    expect(Math.abs(widths[3]! / (10 ** -0.25 * Math.sqrt(2 ** 0.25 - 1)) - 1)).toBeLessThan(1e-3)
+  })
+})

@@ -14,14 +14,12 @@ const TOP = [
   'templates',
   'tests',
 ]
-/** Where the compiler, the linter and the test runner look for their settings. */
-const SETTINGS = ['biome.json', 'tsconfig.json', 'vitest.config.ts']
 const MADE = ['coverage', 'dist', 'node_modules', 'out']
 
 describe('top level', () => {
   it('holds what it is meant to hold and nothing else', () => {
     const found = readdirSync(ROOT).filter((name) => !name.startsWith('.') && !MADE.includes(name))
-    expect(found.sort()).toEqual([...TOP, ...SETTINGS].sort())
+    expect(found.sort()).toEqual([...TOP].sort())
   })
 })
 
