@@ -61,12 +61,16 @@ export function stageSpeed(given: Omit<StageSpeed, 'capability'>, t: Trace): Sta
 }
 
 /** The rule-of-thumb route: intrinsic peak f_T (typical, blind to headroom) against k f_op/β. */
-export function ruleRoute(rule: Rule, bench: Bench): RouteOutcome & { readonly margin: number } {
+export function ruleRoute(rule: Rule, bench: Bench): RouteOutcome {
   const { t } = bench
   const own = bench.rules[rule.key]
   const required =
     own === undefined ? t.calc(ruleDemand, rule.k, rule.f_op, rule.beta) : userDemand(own, rule, bench)
   const available = bench.peak
+  if (!(required > 0 && required < Number.POSITIVE_INFINITY)) {
+    const reason = `the given rule ${own?.text ?? ''} yields no positive frequency here`
+    return { required: null, available, margin: null, reason }
+  }
   return { required, available, margin: t.calc(marginAtLeast, available, required) }
 }
 
@@ -87,7 +91,9 @@ function userDemand(own: NonNullable<Bench['rules'][string]>, rule: Rule, bench:
     unit: 'Hz',
     source: 'this scenario',
   }
-  return bench.t.expression({ ...about, text: own.text }, own.run(inputs), inputs)
+  const required = own.run(inputs)
+  if (!Number.isFinite(required)) return Number.NaN
+  return bench.t.expression({ ...about, text: own.text }, required, inputs)
 }
 
 /** The derived route: f_T available under headroom against the closed form of the circuit. */
@@ -149,16 +155,18 @@ export function speedOutcome(speed: StageSpeed, bench: Bench): Outcome {
 
 /** Puts both routes together: the scenario's route governs, the other is shown beside it. */
 export function combineRoutes(
-  rule: RouteOutcome & { readonly margin: number },
+  rule: RouteOutcome,
   derived: RouteOutcome & { readonly margin: number },
   bench: Bench,
   binding: string,
 ): Outcome {
   const { route } = bench.settings.demand
-  const governs = route !== 'stricter' ? route : rule.margin < derived.margin ? 'rule' : 'derived'
+  if (rule.margin === null && route !== 'derived') return withoutRule(rule, derived)
+  const byRule = rule.margin ?? Number.POSITIVE_INFINITY
+  const governs = route !== 'stricter' ? route : byRule < derived.margin ? 'rule' : 'derived'
   const governing = governs === 'rule' ? rule : derived
   const margin =
-    route === 'stricter' ? bench.t.calc(stricterMargin, rule.margin, derived.margin) : governing.margin
+    route === 'stricter' ? bench.t.calc(stricterMargin, byRule, derived.margin) : governing.margin
   const outcome: Outcome = {
     required: governing.required,
     available: governing.available,
@@ -173,6 +181,20 @@ export function combineRoutes(
     ...outcome,
     ...(governing.reason === undefined ? {} : { reason: governing.reason }),
     alsoShown: [other.required, other.available].filter((value) => value !== null),
+  }
+}
+
+/** A rule that was asked and yields nothing makes the check unknown; its reason is told, the derived route shown. */
+function withoutRule(rule: RouteOutcome, derived: RouteOutcome): Outcome {
+  const { required, available, margin, reason } = rule
+  return {
+    required,
+    available,
+    margin,
+    basis: RULE_BASIS,
+    ...(reason === undefined ? {} : { reason }),
+    rule,
+    derived,
   }
 }
 

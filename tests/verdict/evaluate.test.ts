@@ -186,3 +186,28 @@ describe('the answer', () => {
     expect(assumptions.find(({ path }) => path === 'error_ratio')?.origin).toBe('scenario')
   })
 })
+
+describe('a rule formula that yields no positive frequency', () => {
+  test.each(['1.2e11 - 10 * f_op', 'f_op * sqrt(1.2e10 / f_op - 1)'])(
+    '%s makes the check unknown, with the reason',
+    async (text) => {
+      const found = only(await lane(`demand: {formulas: {clock_buffers: "${text}"}}`)).checks[0]!
+      expect(found).toMatchObject({ margin: null, verdict: 'unknown' })
+      expect(found.reason).toContain('yields no positive frequency')
+      expect(found.derived?.margin).toBeGreaterThan(0)
+    },
+  )
+
+  test('does not matter where the derived demand was asked for', async () => {
+    const found = only(await lane('demand: {route: derived, formulas: {clock_buffers: "1.2e11 - 10 * f_op"}}'))
+      .checks[0]!
+    expect(found.margin).toBe(found.derived?.margin)
+  })
+
+  test('a symbol that the block does not have is told in the same way', async () => {
+    const text =
+      'format: 1\ntitle: A\nblock: clock\nnodes: [P28]\nexamine: [clock_buffers]\noscillator: {kind: LC, range: [9 GHz, 10 GHz]}\ndemand: {formulas: {clock_buffers: "3 * f_B"}}\n'
+    const found = only(await evaluated(text, true)).checks[0]!
+    expect(found.verdict).toBe('unknown')
+  })
+})
