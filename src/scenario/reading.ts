@@ -178,5 +178,5 @@ function defaultValue(key: LeafKey): unknown {
 export function evidenceOf(source: string): Provenance['evidence'] {
   if (source.startsWith('common practice')) return 'common practice'
   if (source.startsWith('estimate')) return 'estimate'
-  return source.startsWith('method') ? 'derived' : 'published'
+  return /^(method|derived|circuit theory)/.test(source) ? 'derived' : 'published'
 }

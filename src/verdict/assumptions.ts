@@ -1,6 +1,7 @@
 import type { Node } from '../nodes/node.ts'
 import type { OptionInput, Provenance } from '../scenario/checked.ts'
-import type { Assumption } from './result.ts'
+import { evidenceOf } from '../scenario/reading.ts'
+import type { Assumption, CaseResult } from './result.ts'
 
 /** Every value used: the scenario's (once where all options share it, else per option), then the nodes'. */
 export function assumptionsOf(
@@ -41,4 +42,25 @@ function assumption(path: string, given: Provenance): Assumption {
     evidence,
     origin,
   }
+}
+
+/** Sources of numbers that are not assumed: what is defined, a law, or the operating point itself. */
+const NO_ASSUMPTION = /^(operating point|definition|law)/
+
+/**
+ * Constants of the method that the derivations rest on: neither scenario nor node states them. They are read off
+ * the derivations, so they are known only where steps were written down.
+ */
+export function methodAssumptions(cases: readonly CaseResult[]): readonly Assumption[] {
+  const found = new Map<string, Assumption>()
+  for (const step of cases.flatMap(({ checks }) => checks.flatMap(({ steps }) => steps))) {
+    const { kind, path, symbol, value, unit, source } = step
+    if (kind !== 'leaf' || path !== undefined || NO_ASSUMPTION.test(source)) continue
+    const same = found.get(`method.${symbol}`)
+    const name =
+      same === undefined || same.value === value ? `method.${symbol}` : `method.${symbol} (${step.meaning})`
+    if (!found.has(name))
+      found.set(name, { path: name, value, unit, source, evidence: evidenceOf(source), origin: 'default' })
+  }
+  return [...found.values()].sort((a, b) => (a.path < b.path ? -1 : 1))
 }

@@ -7,7 +7,7 @@ import type { Node } from '../nodes/node.ts'
 import type { OptionInput, Scenario } from '../scenario/checked.ts'
 import { answerOf } from './answer.ts'
 import { type Asking, askedOf } from './asked.ts'
-import { assumptionsOf } from './assumptions.ts'
+import { assumptionsOf, methodAssumptions } from './assumptions.ts'
 import { type FailingEnd, failingEnds } from './ends.ts'
 import { stepsOf } from './explain.ts'
 import { laterChecks, laterNotExamined, laterResults } from './later.ts'
@@ -59,7 +59,7 @@ export function evaluateScenario(scenario: Scenario, nodes: readonly Node[], abo
       label,
       class_nm: Math.round(values.class * 1e10) / 10,
     })),
-    assumptions: assumptionsOf(options, nodes),
+    assumptions: [...assumptionsOf(options, nodes), ...methodAssumptions(cases)],
     cases,
     answer: answerOf(cases, options, nodes),
   }

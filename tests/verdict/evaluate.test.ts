@@ -199,8 +199,9 @@ describe('a rule formula that yields no positive frequency', () => {
   )
 
   test('does not matter where the derived demand was asked for', async () => {
-    const found = only(await lane('demand: {route: derived, formulas: {clock_buffers: "1.2e11 - 10 * f_op"}}'))
-      .checks[0]!
+    const found = only(
+      await lane('demand: {route: derived, formulas: {clock_buffers: "1.2e11 - 10 * f_op"}}'),
+    ).checks[0]!
     expect(found.margin).toBe(found.derived?.margin)
   })
 
@@ -210,4 +211,17 @@ describe('a rule formula that yields no positive frequency', () => {
     const found = only(await evaluated(text, true)).checks[0]!
     expect(found.verdict).toBe('unknown')
   })
+})
+
+test('constants of the method stand among the assumptions where derivations are written down', async () => {
+  const text = `${HEAD}data_rate: 28 Gb/s\nnodes: [P28]\nexamine: [sampler]\n`
+  const { assumptions } = await evaluated(text, true)
+  expect(assumptions.find(({ path }) => path === 'method.kappa_r')).toMatchObject({
+    value: 2.6,
+    origin: 'default',
+    evidence: 'derived',
+  })
+  expect(
+    assumptions.filter(({ path }) => path.startsWith('method.')).every(({ source }) => source !== ''),
+  ).toBe(true)
 })
