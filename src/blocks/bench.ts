@@ -36,16 +36,16 @@ export interface Bench extends Case {
   readonly peak: number
 }
 
-/** V = V_nom (1 − tol_V) − V_do − V_ir. V_nom [V], tol_V [1], V_do [V] dropout, V_ir [V] wiring → [V]. */
+/** V = V_nom (1 − tol_V) − V_do − V_ir, at least 0. V_nom [V], tol_V [1], V_do [V] dropout, V_ir [V] wiring → [V]. */
 export const lowestSupplyVoltage = formula(
   { symbol: 'V', meaning: 'lowest supply of the case', unit: 'V', source: 'definition' },
-  (V_nom, tol_V, V_do, V_ir) => V_nom * (1 - tol_V) - V_do - V_ir,
+  (V_nom, tol_V, V_do, V_ir) => Math.max(0 * V_nom, V_nom * (1 - tol_V) - V_do - V_ir),
 )
 
-/** V_core = V_nom (1 − tol_V) − V_ir. V_nom [V] core, tol_V [1], V_ir [V] wiring → [V]. */
+/** V_core = V_nom (1 − tol_V) − V_ir, at least 0. V_nom [V] core, tol_V [1], V_ir [V] wiring → [V]. */
 export const lowestCoreVoltage = formula(
   { symbol: 'V_core', meaning: 'lowest core supply of the case', unit: 'V', source: 'definition' },
-  (V_nom, tol_V, V_ir) => V_nom * (1 - tol_V) - V_ir,
+  (V_nom, tol_V, V_ir) => Math.max(0 * V_nom, V_nom * (1 - tol_V) - V_ir),
 )
 
 /** V_raised = V_nom + V_lift. V_nom [V], V_lift [V] → [V]. */

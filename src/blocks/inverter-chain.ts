@@ -104,7 +104,7 @@ function spareAt(state: InverterChain, bench: Bench, J: number): { speed: number
   const V_swing = inverterSwingSupply.run(V_n, V_p, settings.receiver.linear_swing)
   return {
     speed: at.f_T / demandAt(state, at.c_lay, bench, PLAIN) - 1,
-    swing: 1 - V_swing / supplyOfGate.run(V_GS),
+    swing: supplyOfGate.run(V_GS) / V_swing - 1,
   }
 }
 
@@ -139,7 +139,7 @@ const NEEDED = {
   meaning: 'current per width of the nMOS at which speed and swing just suffice',
   unit: 'A/m',
   source: 'search over the current per width, the pMOS at the same gate–source voltage',
-  residual: 'min(f_T/f_T_req - 1, 1 - V_swing/(2 V_GS))',
+  residual: 'min(f_T/f_T_req - 1, 2 V_GS/V_swing - 1)',
   tolerance: '1e-9 relative in √J',
 }
 const ON_BULK = { symbol: 'V_S', meaning: 'sources stand on their bulk', unit: 'V', source: 'definition' }

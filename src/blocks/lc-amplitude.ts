@@ -14,13 +14,13 @@ const SWITCHED = 'T. H. Lee, A. Hajimiri, IEEE JSSC 35(3), 2000: fundamental of 
 /** V0 ≤ 2(V − V_tail): nMOS pair, tank fed from the supply. V [V] lowest supply, V_tail [V] → [V]. */
 export const amplitudeLimit = formula(
   { symbol: 'V0_limit', meaning: 'largest amplitude under the supply', unit: 'V', source: SUPPLY },
-  (V, V_tail) => 2 * (V - V_tail),
+  (V, V_tail) => 2 * Math.max(0 * V, V - V_tail),
 )
 
 /** V0 ≤ V − V_tail: complementary pairs. V [V] lowest supply, V_tail [V] → [V]. */
 export const complementaryAmplitudeLimit = formula(
   { symbol: 'V0_limit', meaning: 'largest amplitude under the supply', unit: 'V', source: SUPPLY },
-  (V, V_tail) => V - V_tail,
+  (V, V_tail) => Math.max(0 * V, V - V_tail),
 )
 
 /** V0 = min(2 I R_p/π, V0_limit): nMOS pair. I_osc [A], R_p [Ω], V0_limit [V] → [V]. */

@@ -28,7 +28,8 @@ export interface Stage {
   readonly swingSpare: (J: number) => number
   /** Volts to spare in the line that relaxes with J (own saturation). */
   readonly ownSpare: (J: number) => number
-  /** Swing that own saturation must carry, for its margin. */
+  /** Swing of the gain–swing line and that of own saturation, for their margins [V]. */
+  readonly gainSwing: number
   readonly ownSwing: number
   /** The device speed the stage has at J. */
   readonly speed: (J: number, t: Trace) => number
@@ -55,13 +56,13 @@ export const NO_LINE = (): number => Number.POSITIVE_INFINITY
 
 /** Where J may lie whatever the supply: density and gain–swing above, own saturation below. */
 export function windowOf(stage: Stage, root: RootIn): Window {
-  const { J_low, J_lim, swingSpare, ownSpare } = stage
+  const { J_low, J_lim, swingSpare, ownSpare, ownSwing, gainSwing } = stage
   if (swingSpare(J_low) < 0) {
     return {
       J_from: J_low,
       J_to: J_low,
       endedBy: 'gain–swing',
-      impossible: 1 + swingSpare(J_low) / stage.ownSwing,
+      impossible: gainSwing / (gainSwing - swingSpare(J_low)),
     }
   }
   const swingLimited = swingSpare(J_lim) < 0
@@ -69,7 +70,12 @@ export function windowOf(stage: Stage, root: RootIn): Window {
   const endedBy: Line = swingLimited ? 'gain–swing' : 'density'
   if (ownSpare(J_low) >= 0) return { J_from: J_low, J_to, endedBy }
   if (ownSpare(J_to) < 0) {
-    return { J_from: J_to, J_to, endedBy: 'own saturation', impossible: 1 + ownSpare(J_to) / stage.ownSwing }
+    return {
+      J_from: J_to,
+      J_to,
+      endedBy: 'own saturation',
+      impossible: Math.max(0, 1 + ownSpare(J_to) / ownSwing),
+    }
   }
   return { J_from: root(ownSpare, J_low, J_to), J_to, endedBy }
 }

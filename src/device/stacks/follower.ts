@@ -22,6 +22,7 @@ export function sourceFollower({ device, V_tail, V_swing, V_m }: Follower): Stag
   return {
     J_low: 0.01 * (device.I_spec / device.of.L),
     J_lim: device.J_lim,
+    gainSwing: V_swing,
     ownSwing: V_swing,
     supplyNeeded: (J, t) => t.calc(followerInput, gateVoltageAt(device, J, V_tail, t), V_tail, V_swing, V_m),
     bindingAt: () => 'follower',

@@ -24,12 +24,13 @@ export interface CrossCoupled {
 export function lcPair({ nmos, pmos, V_tail }: CrossCoupled): Stage {
   const needed = (J: number, t: Trace): number => {
     const V_GS = gateVoltageAt(nmos, J, V_tail, t)
-    if (pmos === null) return t.calc(startUpVoltage, V_GS, V_tail)
-    return t.calc(complementaryStartUp, V_GS, gateVoltageAt(pmos, J, 0, t), V_tail)
+    if (pmos === null) return t.calc(startUpVoltage, V_GS, V_tail, nmos.U_T)
+    return t.calc(complementaryStartUp, V_GS, gateVoltageAt(pmos, J, 0, t), V_tail, nmos.U_T)
   }
   return {
     J_low: 0.01 * (nmos.I_spec / nmos.of.L),
     J_lim: pmos === null ? nmos.J_lim : Math.min(nmos.J_lim, pmos.J_lim),
+    gainSwing: 1,
     ownSwing: 1,
     supplyNeeded: needed,
     bindingAt: () => 'start-up voltage',

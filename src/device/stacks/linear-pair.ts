@@ -60,6 +60,7 @@ export function linearPair(pair: LinearPair): Stage {
   return {
     J_low: 0.01 * (device.I_spec / device.of.L),
     J_lim: device.J_lim,
+    gainSwing: V_sw,
     ownSwing: excursion,
     supplyNeeded: (J, t) => t.calc(largerOfTwo, ...lines(J, t)),
     bindingAt: (J) => {

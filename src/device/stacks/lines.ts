@@ -100,16 +100,16 @@ export const linearOutput = formula(
   (V_S, V_DSsat, V_sw, V_lin) => V_S + V_DSsat + V_sw / 2 + V_lin / 4,
 )
 
-/** V_start = V_GS + V_tail: a cross-coupled pair at start-up. V_GS [V], V_tail [V] → [V]. */
+/** V_start = max(V_GS, 3 U_T) + V_tail: a cross-coupled pair at start-up, its drain at its gate. V_GS [V], V_tail [V], U_T [V] → [V]. */
 export const startUpVoltage = formula(
   { symbol: 'V_start', meaning: 'supply that the pair asks for at start-up', unit: 'V', source: LINES },
-  (V_GS, V_tail) => V_GS + V_tail,
+  (V_GS, V_tail, U_T) => Math.max(V_GS, 3 * U_T) + V_tail,
 )
 
-/** V_start = V_GS + V_SG + V_tail: complementary pairs at start-up. V_GS [V], V_SG [V], V_tail [V] → [V]. */
+/** V_start = max(V_GS, 3 U_T) + max(V_SG, 3 U_T) + V_tail: complementary pairs at start-up. V_GS [V], V_SG [V], V_tail [V], U_T [V] → [V]. */
 export const complementaryStartUp = formula(
   { symbol: 'V_start', meaning: 'supply that both pairs ask for at start-up', unit: 'V', source: LINES },
-  (V_GS, V_SG, V_tail) => V_GS + V_SG + V_tail,
+  (V_GS, V_SG, V_tail, U_T) => Math.max(V_GS, 3 * U_T) + Math.max(V_SG, 3 * U_T) + V_tail,
 )
 
 /** V_need = V_GS + V_S + V_swing + V_m: a source follower. V_GS [V], V_S [V], V_swing [V] full swing, V_m [V] → [V]. */

@@ -68,6 +68,7 @@ export function outputPair({ device, V_low, V_sw_in, A, V_m, V_tail, c_sat }: Ou
   return {
     J_low: 0.01 * (device.I_spec / device.of.L),
     J_lim: device.J_lim,
+    gainSwing: V_sw_in,
     ownSwing: V_sw_in,
     supplyNeeded: (J, t) => t.calc(largerOfTwo, ...lines(J, t)),
     bindingAt: (J) => {

@@ -119,6 +119,7 @@ export function switchedPair(pair: SwitchedPair): Stage {
   return {
     J_low: 0.01 * (device.I_spec / device.of.L),
     J_lim: device.J_lim,
+    gainSwing: V_sw,
     ownSwing: V_sw,
     supplyNeeded: (J, t) => foldLines(pair, J, t, largest),
     bindingAt: (J) => foldLines(pair, J, PLAIN, binding),
