@@ -17,7 +17,8 @@ function demo(file) {
     console.log(`  FAILED with status ${done.status}\n${done.stderr}`)
     return false
   }
-  for (const ending of ['html', 'pdf', 'json', 'csv']) console.log(`  out/demo/${stem}.${ending}`)
+  for (const ending of ['html', 'pdf', 'json', 'csv', 'assumptions.csv'])
+    console.log(`  out/demo/${stem}.${ending}`)
   console.log(`  ${JSON.parse(readFileSync(`${root}out/demo/${stem}.json`, 'utf8')).answer.sentence}`)
   return true
 }

@@ -12,8 +12,12 @@ clocking: half-rate           # full-rate | half-rate | quarter-rate | eighth-ra
 error_ratio: 1e-12            # of the detector, before error correction
 
 oscillator: {kind: LC, range: [13 GHz, 15 GHz]}    # must hold the lane's clock (invented)
+supply: {lift: 60 mV, tolerance: 2 %}               # stacked stages on a regulated supply above core (invented)
+headroom: {latch_stack: tail-less}
+peaking: {clock: shunt-delay, transmit: shunt-delay, receive: shunt-delay}
+transmitter: {swing: 0.6 V}                         # invented
 receiver: {dfe_taps: 1, dfe: unrolled}
-pads: {cdm_current: 4 A}      # your protection requirement (invented)
+pads: {cdm_current: 3 A, extension: T-coil}         # your protection requirement (invented)
 # An uncertain value: {low: 18 dB, typical: 22 dB, high: 26 dB} or {mean: 22 dB, sigma: 2 dB}
 # Ask for more by writing it: channel, loop, jitter_budget, power_budget, fec.
 
