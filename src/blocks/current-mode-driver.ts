@@ -5,7 +5,6 @@ import { halfDensity, tailVoltage } from '../device/stacks/lines.ts'
 import { outputDrop, outputPair, outputTop } from '../device/stacks/output-pair.ts'
 import { SWITCH_FLOOR } from '../device/voltage.ts'
 import type { Bench, StackSupply } from './bench.ts'
-import { notedDesignDensity } from './design-point.ts'
 import { layoutShare, loadFactor, peakingFactor, poleDemand } from './load.ts'
 import type { Stacked } from './stack-checks.ts'
 import { type StageSpeed, stageSpeed } from './stage-speed.ts'
@@ -103,7 +102,10 @@ export interface DriverSize {
   readonly operates: boolean
 }
 
-/** Size of the output stage at its design point. */
+/**
+ * Size of the output stage at its capability: the narrowest that its lines allow, since its drains load the pad. At
+ * the design point, the slowest bias that is fast enough, it would be several times wider for nothing.
+ */
 export function driverSize(
   speed: StageSpeed,
   { device }: Exclude<StackSupply, { missing: string }>,
@@ -111,7 +113,7 @@ export function driverSize(
 ): DriverSize {
   const { t, settings, node } = bench
   const I = t.calc(driverCurrent, settings.transmitter.swing, settings.transmitter.termination)
-  const found = notedDesignDensity(speed, bench.guard, t)
+  const found = speed.capability.J
   const J = found ?? device.J_lim
   const W = t.calc(driverWidth, I, J)
   const C_gg = gateCapacitanceOf(device, t.calc(halfDensity, J), t)

@@ -64,7 +64,7 @@ function driverDrain(bench: Bench): Drain | Unprepared {
   if (stack.missing !== undefined) return { unknown: stack.missing }
   const { C_drain, operates } = driverSize(currentModeDriver(bench, stack).speed, stack, bench)
   const basis = operates
-    ? 'driver at its design point'
+    ? 'driver at its capability'
     : 'driver without operating point, sized at the largest admissible current per width'
   return { C: C_drain, basis }
 }

@@ -43,10 +43,10 @@ describe('the current-mode driver', () => {
     expect(headroom[3]).toBeLessThan(headroom[0]!)
   })
 
-  it('law: the output stage carries the whole current at the density reported', () => {
+  it('law: the output stage carries the whole current at the density of its capability', () => {
     const found = resultsOf(caseOf(28), driver)
     const value = (name: string) => found[name]!.value!
-    expect(value('driver.width_m') * value('device.driver.J_A_per_m')).toBeCloseTo(
+    expect(value('driver.width_m') * value('device.driver.capability.J_A_per_m')).toBeCloseTo(
       value('driver.current_A'),
       12,
     )
