@@ -5,6 +5,7 @@ import { speedAt } from '../device/speed.ts'
 import type { DeviceValues, NodeValues } from '../nodes/keys.ts'
 import type { Settings } from '../scenario/keys/index.ts'
 import type { UserRule } from '../scenario/rule-formula.ts'
+import type { Kept } from './kept.ts'
 import { type Rates, ratesOf } from './rates.ts'
 
 /** One case: an option in a node. Nothing in it depends on the operating point. */
@@ -13,6 +14,8 @@ export interface Case {
   readonly settings: Settings
   readonly node: NodeValues
   readonly rules: Readonly<Partial<Record<string, UserRule>>>
+  /** What one evaluation of the case found and need not find again; absent: everything is found anew. */
+  readonly kept?: Kept
 }
 
 /** The supply and the transistor of the stacked stages, or why there is none. */
@@ -34,6 +37,8 @@ export interface Bench extends Case {
   readonly guard: number
   /** The node's intrinsic peak f_T (typical, 300 K), what rules of thumb are measured on [Hz]. */
   readonly peak: number
+  /** The state that a function prepares from this bench, prepared once however many ask for it. */
+  readonly once: <T>(prepare: (bench: Bench) => T) => T
 }
 
 /** V = V_nom (1 − tol_V) − V_do − V_ir, at least 0. V_nom [V], tol_V [1], V_do [V] dropout, V_ir [V] wiring → [V]. */
@@ -81,11 +86,9 @@ export function benchAt(given: Case, at: OperatingPoint, t: Trace): Bench {
     at.tol_V,
     settings.supply.ir_drop,
   )
-  return {
-    block: given.block,
-    settings,
-    node,
-    rules: given.rules,
+  const states = new Map<unknown, unknown>()
+  const bench: Bench = {
+    ...given,
     at,
     t,
     rates: ratesOf(given, t),
@@ -95,7 +98,12 @@ export function benchAt(given: Case, at: OperatingPoint, t: Trace): Bench {
     stack: stackSupply(given, at, nmos, t),
     guard: settings.guard,
     peak: peakTransitFrequency(node, t),
+    once: <T>(prepare: (bench: Bench) => T): T => {
+      if (!states.has(prepare)) states.set(prepare, prepare(bench))
+      return states.get(prepare) as T
+    },
   }
+  return bench
 }
 
 function stackSupply(given: Case, at: OperatingPoint, nmos: DeviceHere, t: Trace): StackSupply {

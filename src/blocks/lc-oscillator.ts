@@ -22,7 +22,8 @@ import { ASKED, type CheckSpec, notAsked, type Outcome, subBlock, type Unprepare
 
 const NO_TAIL = { symbol: 'V_tail', meaning: 'no tail source', unit: 'V', source: 'definition' }
 
-function prepare(bench: Bench): LcOscillator | Unprepared {
+/** The LC oscillator of a case at its operating point, or why there is none. */
+export function lcOscillatorAt(bench: Bench): LcOscillator | Unprepared {
   const { stack, settings, t } = bench
   const oscillator = settings.oscillator!
   if (stack.missing !== undefined) return { unknown: stack.missing }
@@ -144,7 +145,7 @@ export const lcOscillator = subBlock<LcOscillator>({
     if (oscillator === null) return notAsked('the scenario states no oscillator')
     return oscillator.kind === 'LC' ? ASKED : notAsked('the oscillator is a ring')
   },
-  prepare,
+  prepare: lcOscillatorAt,
   checks: CHECKS,
   results: oscillatorResults,
 })

@@ -26,7 +26,8 @@ export const insideRange = formula(
 )
 
 const YES = { symbol: 'required', meaning: 'yes', unit: '1', source: 'definition' }
-const PHASE_RATIO = {
+/** How many periods of the oscillator make one of the clock. */
+export const PHASE_RATIO = {
   symbol: 'k_ph',
   meaning: 'oscillator periods a clock period',
   unit: '1',

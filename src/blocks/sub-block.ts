@@ -67,8 +67,10 @@ export interface SubBlock<State> {
   /** Everything its checks share; run once an operating point. */
   readonly prepare: (bench: Bench) => State | Unprepared
   readonly checks: readonly CheckSpec<State>[]
-  /** Named results at the operating point that decides the speed check. */
+  /** Named results, at the operating point that decides the first check, or that `worseBy` tells. */
   readonly results: (state: State, bench: Bench) => readonly NamedResult[]
+  /** The larger, the worse is the operating point: results are shown where it is largest. */
+  readonly worseBy?: (state: State, bench: Bench) => number
 }
 
 /** Closes a sub-block over its state, so that different ones can stand in one registry. */
@@ -81,6 +83,8 @@ export interface AnySubBlock {
   /** Outcomes of the asked checks, in their order. */
   readonly outcomes: (bench: Bench, asked: readonly number[]) => readonly Outcome[]
   readonly results: (bench: Bench) => readonly NamedResult[]
+  /** How bad this operating point is; null when the first check decides where results are shown. */
+  readonly worseBy: ((bench: Bench) => number) | null
 }
 
 const unknownOutcome = (reason: string): Outcome => ({
@@ -93,16 +97,24 @@ const unknownOutcome = (reason: string): Outcome => ({
 
 /** Makes a sub-block ready for the registry. */
 export function subBlock<State extends object>(spec: SubBlock<State>): AnySubBlock {
+  const { worseBy } = spec
   return {
     ...spec,
     outcomes: (bench, asked) => {
-      const state = spec.prepare(bench)
+      const state = bench.once(spec.prepare)
       if ('unknown' in state) return asked.map(() => unknownOutcome(state.unknown))
       return asked.map((k) => spec.checks[k]!.evaluate(state, bench))
     },
     results: (bench) => {
-      const state = spec.prepare(bench)
+      const state = bench.once(spec.prepare)
       return 'unknown' in state ? [] : spec.results(state, bench)
     },
+    worseBy:
+      worseBy === undefined
+        ? null
+        : (bench) => {
+            const state = bench.once(spec.prepare)
+            return 'unknown' in state ? Number.NEGATIVE_INFINITY : worseBy(state, bench)
+          },
   }
 }

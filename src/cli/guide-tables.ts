@@ -1,4 +1,3 @@
-import { SUB_BLOCKS } from '../blocks/registry.ts'
 import { exchangeStudy } from '../explore/exchange.ts'
 import { stackedStageSpeed } from '../explore/stacked-stage.ts'
 import { nodeKeys } from '../nodes/keys.ts'
@@ -7,6 +6,7 @@ import { type KeyRow, keyTable } from '../scenario/key-table.ts'
 import { optionKeys, scenarioKeys } from '../scenario/keys/index.ts'
 import { optionHeadKeys } from '../scenario/option-keys.ts'
 import { group } from '../scenario/schema.ts'
+import { PARTS } from '../verdict/parts.ts'
 import { ARGUMENT_CODES } from './argument-codes.ts'
 import type { Io } from './io.ts'
 import { builtInNodes } from './nodes.ts'
@@ -48,7 +48,7 @@ export function guideTables(io: Io): GuideTables {
       core: shownValue(values.supply.core, 'V'),
       edition: values.edition ?? '',
     })),
-    subBlocks: SUB_BLOCKS.map(({ id, title, of, checks }) => ({
+    subBlocks: PARTS.map(({ id, title, of, checks }) => ({
       id,
       title,
       of: of.join(', '),

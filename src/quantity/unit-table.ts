@@ -4,7 +4,7 @@
  * multiplied.
  */
 
-/** Exponents of the base kinds: m, kg, s, A, K, bit, byte, Bd, UI, and one for each logarithmic unit. */
+/** Exponents of the base kinds: m, kg, s, A, K, bit, byte, Bd, UI, degree of angle, and one for each logarithmic unit. */
 export type Kind = Readonly<Record<string, number>>
 
 export interface Unit {
@@ -62,6 +62,8 @@ const UNITS: readonly Unit[] = [
   unit('Bd', 0, { Bd: 1 }),
   unit('baud', 0, { Bd: 1 }, false),
   unit('UI', 0, { UI: 1 }, true),
+  unit('deg', 0, { deg: 1 }, false),
+  unit('°', 0, { deg: 1 }, false),
   unit('%', -2, {}, false),
   unit('ppm', -6, {}, false),
   { ...CELSIUS, symbol: '°C' },

@@ -43,6 +43,14 @@ export const FAULT_CODES = {
   'oscillator.missing': 'A clock block needs an oscillator.',
   'channel.incomplete': 'A channel needs a loss and its frequency, or a file.',
   'jitter.incomplete': 'A jitter budget needs a preset or at least one allowance.',
+  'jitter.preset-block': 'A preset is for the other kind of block.',
+  'jitter.unit-interval': 'A clock block has no unit interval, so its allowances are times.',
+  'loop.oscillator': 'A loop needs the oscillator that it locks.',
+  'loop.band': 'The band of integration is empty or holds too little.',
+  'profile.order': 'The offsets of a profile do not rise from row to row.',
+  'profile.short': 'A profile does not cover the band of integration.',
+  'profile.twice': 'A profile is given both in the scenario and as a file.',
+  'csv.form': 'A CSV file does not hold the columns that are due.',
 } as const
 
 export type FaultCode = keyof typeof FAULT_CODES

@@ -2,6 +2,7 @@ import type { OptionInput, Provenance } from './checked.ts'
 import { type Fault, faultAt, type Place } from './fault.ts'
 import { optionKeys, type ScenarioHead, type Settings, scenarioKeys } from './keys/index.ts'
 import { optionHeadKeys } from './option-keys.ts'
+import { withProfiles } from './profile-files.ts'
 import { readKeys, refuseUnknown } from './reading.ts'
 import {
   type FormulaParser,
@@ -11,19 +12,31 @@ import {
   type UserRule,
 } from './rule-formula.ts'
 import { crossFaults, type Written } from './rules.ts'
-import { inWords, laidOver, type MapTree, picked, placeOf, type Tree, without } from './tree.ts'
+import { type Access, inWords, laidOver, type MapTree, picked, placeOf, type Tree, without } from './tree.ts'
 
 /** Most options that a scenario may have. */
 export const MOST_OPTIONS = 64
+
+/** Other files that a scenario names, and every file read so far. */
+export interface Outside {
+  readonly access: Access
+  readonly files: { file: string; text: string }[]
+}
 
 /** Reads every option: the scenario's keys with the option's own laid over them. */
 export async function readOptions(
   tree: MapTree,
   base: MapTree,
   head: ScenarioHead,
+  outside: Outside,
   faults: Fault[],
 ): Promise<readonly OptionInput[]> {
-  const parts = optionTrees(tree, base, faults)
+  const written = optionTrees(tree, base, faults)
+  const parts: OptionTree[] = []
+  for (const part of written) {
+    const merged = await withProfiles(part.merged, outside.access, outside.files, faults)
+    parts.push({ ...part, merged })
+  }
   // Faults of keys that every option overrides are told as well; what is missing may still come from an option.
   const ofBase: Fault[] = []
   readKeys(optionKeys, picked(base, Object.keys(optionKeys)), '', {

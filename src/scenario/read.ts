@@ -51,7 +51,7 @@ export async function readScenarioParts(source: string, file: string, access: Ac
   if (head.date !== null && head.date !== undefined)
     faults.push(...dateFault(head.date, placeOf(tree, 'date')))
   const base = without(tree, [...Object.keys(scenarioKeys), 'options'])
-  const options = await readOptions(tree, base, head, faults)
+  const options = await readOptions(tree, base, head, { access, files }, faults)
   const unique = inOrder(complete ? faults : faults.filter(({ code }) => !MISSING.includes(code)))
   return {
     scenario: unique.length > 0 ? null : { head, options, files },

@@ -1,3 +1,4 @@
+import { formatQuantity } from '../quantity/format.ts'
 import { faultAt } from './fault.ts'
 import { nearest } from './nearest.ts'
 import type { Read, Reading } from './reading.ts'
@@ -191,5 +192,34 @@ export function readRows(
     }
     return key.columns.map((column, k) => readNumber(column, row.items[k] as ScalarTree, path, reading))
   })
-  return rows.some((row) => row === null || row.includes(null)) ? null : { value: rows as number[][] }
+  if (rows.some((row) => row === null || row.includes(null))) return null
+  return key.rising === true && !rises(rows as number[][], key, tree.items, reading)
+    ? null
+    : { value: rows as number[][] }
+}
+
+/** Whether the first column rises from row to row; every row that does not is a fault. */
+function rises(
+  rows: readonly (readonly number[])[],
+  key: RowsKey,
+  items: readonly Tree[],
+  { faults }: Reading,
+): boolean {
+  const { name, unit } = key.columns[0]!
+  const wrong = rows.flatMap(([value], k) => (k > 0 && value! <= rows[k - 1]![0]! ? [k] : []))
+  for (const k of wrong) {
+    const [before, value] = [rows[k - 1]![0]!, rows[k]![0]!]
+    faults.push(
+      faultAt(
+        items[k]!.place,
+        'profile.order',
+        value === before
+          ? `the ${name} ${formatQuantity(value, unit)} twice`
+          : `the ${name} ${formatQuantity(value, unit)} after ${formatQuantity(before, unit)}`,
+        `rising ${name}s, each once`,
+        value === before ? 'remove one of the two rows' : 'sort the rows',
+      ),
+    )
+  }
+  return wrong.length === 0
 }

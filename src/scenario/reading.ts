@@ -39,12 +39,39 @@ export function readKeys(
 ): Readonly<Record<string, unknown>> {
   if (tree !== null) refuseUnknown(keys, tree, path, reading.faults)
   const values: Record<string, unknown> = {}
+  const written = tree === null ? null : inIntervals(keys, tree)
   for (const [name, key] of Object.entries(keys)) {
-    const entry = tree?.entries.get(name)
+    const entry = written?.entries.get(name)
     const at = path === '' ? name : `${path}.${name}`
     values[name] = readKey(key, entry?.value ?? null, at, entry?.at ?? near, reading)
   }
   return values
+}
+
+/** What is written in unit intervals under a key of time belongs to its companion, unless that is written too. */
+function inIntervals(keys: Keys, tree: MapTree): MapTree {
+  const moved = [...tree.entries].flatMap(([name, entry]) => {
+    const key = Object.hasOwn(keys, name) ? keys[name]! : undefined
+    const companion = key?.type === 'quantity' ? key.inUI : undefined
+    if (companion === undefined || tree.entries.has(companion) || !countsIntervals(entry.value)) return []
+    return [{ name, companion, entry }]
+  })
+  if (moved.length === 0) return tree
+  const entries = new Map(tree.entries)
+  for (const { name, companion, entry } of moved) {
+    entries.delete(name)
+    entries.set(companion, entry)
+  }
+  return { ...tree, entries }
+}
+
+/** Whether a value, or the first of an uncertain one, is written in UI. */
+function countsIntervals(tree: Tree): boolean {
+  if (tree.kind === 'map') {
+    const [first] = tree.entries.values()
+    return first !== undefined && countsIntervals(first.value)
+  }
+  return tree.kind === 'scalar' && /\b[a-zµμ]?UI$/.test(tree.text.trim())
 }
 
 /** Tells every key that is not declared, with the declared one nearest to it. */

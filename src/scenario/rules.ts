@@ -1,3 +1,4 @@
+import { formatQuantity } from '../quantity/format.ts'
 import { type Fault, faultAt, type Place } from './fault.ts'
 import type { ScenarioHead, Settings } from './keys/index.ts'
 
@@ -56,20 +57,128 @@ const channelIsComplete: Rule = ({ channel }, _block, { has, placeOf }) =>
         ),
       ]
 
+const INTERVALS = ['random_ui', 'bounded_ui', 'total_ui', 'even_odd_ui'] as const
+const ALLOWANCES = ['preset', 'random', 'bounded', 'total', 'even_odd', ...INTERVALS]
+
 const jitterIsComplete: Rule = ({ jitter_budget: budget }, _block, { has, placeOf }) =>
-  budget === null || ['preset', 'random', 'bounded', 'total'].some((one) => has(`jitter_budget.${one}`))
+  budget === null || ALLOWANCES.some((one) => has(`jitter_budget.${one}`))
     ? []
     : [
         faultAt(
           placeOf('jitter_budget'),
           'jitter.incomplete',
           'a jitter budget without allowance',
-          '`preset`, `random`, `bounded` or `total`',
+          '`preset`, `random`, `bounded`, `total` or `even_odd`',
           'name a preset or at least one allowance',
         ),
       ]
 
-const RULES: readonly Rule[] = [linkIsComplete, clockHasOscillator, channelIsComplete, jitterIsComplete]
+const presetFitsBlock: Rule = ({ jitter_budget: budget }, block, { has, placeOf }) => {
+  const preset = budget?.preset ?? null
+  if (preset === null || !has('jitter_budget.preset')) return []
+  const ofClock = preset.startsWith('pcie-refclk')
+  if (ofClock === (block === 'clock')) return []
+  const found = `\`${preset}\` in a ${block} block`
+  return [
+    faultAt(
+      placeOf('jitter_budget'),
+      'jitter.preset-block',
+      found,
+      ofClock ? 'this preset in a clock block' : 'this preset in a link block',
+      block === 'clock'
+        ? 'state the allowances, or take a preset of reference clocks'
+        : 'take a preset of lanes',
+    ),
+  ]
+}
+
+const clockHasNoInterval: Rule = ({ jitter_budget: budget }, block, { placeOf }) =>
+  block !== 'clock' || budget === null
+    ? []
+    : INTERVALS.filter((key) => budget[key] != null).map((key) =>
+        faultAt(
+          placeOf('jitter_budget'),
+          'jitter.unit-interval',
+          `\`${key.slice(0, -3)}\` in UI`,
+          'a time, such as `150 fs`',
+          'state the allowance as a time',
+        ),
+      )
+
+const loopHasOscillator: Rule = ({ loop }, block, { has, placeOf }) =>
+  loop === null || block === 'clock' || has('oscillator')
+    ? []
+    : [
+        faultAt(
+          placeOf('loop'),
+          'loop.oscillator',
+          'a loop without `oscillator`',
+          'the oscillator that it locks',
+          'add `oscillator: {kind: LC, range: [13 GHz, 15 GHz]}`',
+        ),
+      ]
+
+/** Least ratio of the ends of a band of integration. */
+const NARROWEST = 2
+
+const bandHoldsEnough: Rule = ({ loop }, _block, { placeOf }) => {
+  const band = loop?.band ?? null
+  if (band === null || band[1] >= NARROWEST * band[0]) return []
+  return [
+    faultAt(
+      placeOf('loop'),
+      'loop.band',
+      `a band from ${formatQuantity(band[0], 'Hz')} to ${formatQuantity(band[1], 'Hz')}`,
+      `an upper end of at least ${NARROWEST} times the lower`,
+      'widen `band`, for instance `[1 kHz, 1 GHz]`',
+    ),
+  ]
+}
+
+/** A profile must hold the whole band; a reference only up to half its frequency, where its sampling ends. */
+const profilesCoverBand: Rule = ({ loop, oscillator }, _block, { placeOf }) => {
+  const band = loop?.band ?? null
+  if (loop === null || band === null) return []
+  const reference = loop.reference ?? Number.POSITIVE_INFINITY
+  return [
+    ...uncovered('oscillator', oscillator?.phase_noise ?? null, band, placeOf),
+    ...uncovered('loop', loop.reference_noise, [band[0], Math.min(band[1], reference / 2)], placeOf),
+  ]
+}
+
+function uncovered(
+  group: string,
+  rows: readonly (readonly number[])[] | null,
+  [low, high]: readonly [number, number],
+  placeOf: Written['placeOf'],
+): readonly Fault[] {
+  if (rows === null || rows.length === 0) return []
+  const [first, last] = [rows[0]![0]!, rows.at(-1)![0]!]
+  if (rows.length > 1 && first <= low && last >= high) return []
+  const said = (from: number, to: number): string =>
+    `${formatQuantity(from, 'Hz')} to ${formatQuantity(to, 'Hz')}`
+  return [
+    faultAt(
+      placeOf(group),
+      'profile.short',
+      rows.length === 1 ? 'a profile of one offset' : `a profile from ${said(first, last)}`,
+      `two offsets or more that cover ${said(low, high)}`,
+      'add offsets, or narrow `loop.band`',
+    ),
+  ]
+}
+
+const RULES: readonly Rule[] = [
+  linkIsComplete,
+  clockHasOscillator,
+  channelIsComplete,
+  jitterIsComplete,
+  presetFitsBlock,
+  clockHasNoInterval,
+  loopHasOscillator,
+  bandHoldsEnough,
+  profilesCoverBand,
+]
 
 /** Every fault between the keys of one option. */
 export function crossFaults(

@@ -26,6 +26,8 @@ export interface QuantityKey extends KeyAbout {
   /** Zero and below are refused unless `min` admits them. */
   readonly default?: string
   readonly required?: boolean
+  /** The key that takes the value when it is written in unit intervals. */
+  readonly inUI?: string
   /** May be written as `{low, typical, high}` or `{mean, sigma}`. Default true. */
   readonly uncertain?: boolean
 }
@@ -90,6 +92,8 @@ export interface RowsKey extends KeyAbout {
     readonly max: number
   }[]
   readonly longest: number
+  /** Whether the first column must rise from row to row. */
+  readonly rising?: boolean
 }
 
 /** A group of keys that always exists: what is not written takes its defaults. */

@@ -1,6 +1,6 @@
 import type { Case } from '../blocks/bench.ts'
-import { SUB_BLOCKS } from '../blocks/registry.ts'
 import type { AnySubBlock, CheckSpec } from '../blocks/sub-block.ts'
+import { PARTS } from './parts.ts'
 import type { NotExamined } from './result.ts'
 
 /** A sub-block that a case asks for, with the places of its asked checks. */
@@ -19,7 +19,7 @@ export interface Asking {
 export function askedOf(given: Case): Asking {
   const blocks: AskedBlock[] = []
   const notExamined: NotExamined[] = []
-  for (const block of SUB_BLOCKS) {
+  for (const block of PARTS) {
     if (!block.of.includes(given.block)) continue
     const asked = block.asked(given)
     const { examine } = given.settings

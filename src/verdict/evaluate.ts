@@ -1,8 +1,10 @@
 import type { Case } from '../blocks/bench.ts'
 import { benchAt } from '../blocks/bench.ts'
+import { keeping } from '../blocks/kept.ts'
 import { ratesOf } from '../blocks/rates.ts'
-import type { Outcome } from '../blocks/sub-block.ts'
+import type { AnySubBlock, Outcome } from '../blocks/sub-block.ts'
 import { PLAIN } from '../derivation/trace.ts'
+import type { OperatingPoint } from '../device/conditions.ts'
 import type { Node } from '../nodes/node.ts'
 import type { OptionInput, Scenario } from '../scenario/checked.ts'
 import { answerOf } from './answer.ts'
@@ -71,7 +73,8 @@ export function caseOf(scenario: Scenario, option: OptionInput, node: Node): Cas
 }
 
 /** Evaluates one option in one node. */
-export function evaluateCase(given: Case, option: OptionInput, node: Node, about: About): CaseResult {
+export function evaluateCase(plain: Case, option: OptionInput, node: Node, about: About): CaseResult {
+  const given = { ...plain, kept: plain.kept ?? keeping() }
   const asking = askedOf(given)
   const points = casePoints(given.settings, given.node)
   const worst = worstOf(given, asking, points)
@@ -163,11 +166,23 @@ function resultsOf(
   const results: Record<string, NamedValue> = {}
   let k = 0
   for (const { block, checks } of asking.blocks) {
-    const at = worst[k]?.at ?? points.typical
+    const at = shownAt(given, block, checks.length > 0 ? worst[k]?.at : undefined, points)
     for (const { name, ...value } of block.results(benchAt(given, at, PLAIN))) results[name] = value
     k += checks.length
   }
   return results
+}
+
+/** Where the results of a sub-block are shown: at its worst point by its own measure, else by its first check. */
+function shownAt(
+  given: Case,
+  { worseBy }: AnySubBlock,
+  byCheck: OperatingPoint | undefined,
+  { judged, typical }: CasePoints,
+): OperatingPoint {
+  if (worseBy === null) return byCheck ?? typical
+  const measured = judged.map((at) => ({ at, by: worseBy(benchAt(given, at, PLAIN)) }))
+  return measured.reduce((worst, one) => (one.by > worst.by ? one : worst)).at
 }
 
 function shownOption(block: 'link' | 'clock', { id, label, settings }: OptionInput): OptionShown {

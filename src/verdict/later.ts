@@ -20,48 +20,6 @@ const NOT_YET = 'not evaluated in this version'
 
 const LATER: readonly Later[] = [
   {
-    subBlock: 'loop',
-    name: 'jitter',
-    title: 'Clock: random jitter of the loop',
-    quantity: 'rms jitter',
-    unit: 's',
-    sense: 'at most',
-    asked: ({ settings }) => settings.loop !== null,
-    otherwise: 'the scenario states no loop',
-    results: [
-      ['clock.loop.bandwidth_Hz', 'Hz'],
-      ['clock.jitter.rms_s', 's'],
-      ['clock.jitter.tracked_rms_s', 's'],
-      ['clock.phaseNoise.at_1MHz_dBc_Hz', 'dBc/Hz'],
-    ],
-  },
-  {
-    subBlock: 'loop',
-    name: 'lock_time',
-    title: 'Clock: lock time',
-    quantity: 'time to lock',
-    unit: 's',
-    sense: 'at most',
-    asked: ({ settings }) => settings.loop?.lock_time != null,
-    otherwise: 'the scenario states no lock time',
-    results: [],
-  },
-  {
-    subBlock: 'jitter',
-    name: 'budget',
-    title: 'Jitter budget',
-    quantity: 'total jitter',
-    unit: 'UI',
-    sense: 'at most',
-    asked: ({ settings }) => settings.jitter_budget !== null,
-    otherwise: 'the scenario states no jitter budget',
-    results: [
-      ['jitter.random_rms_s', 's'],
-      ['jitter.bounded_pp_s', 's'],
-      ['jitter.total_UI', 'UI'],
-    ],
-  },
-  {
     subBlock: 'link',
     name: 'margin',
     title: 'Link: operating margin over the channel',
@@ -99,7 +57,7 @@ const LATER: readonly Later[] = [
     quantity: 'power',
     unit: 'W',
     sense: 'at most',
-    asked: ({ settings }) => settings.power_budget !== null,
+    asked: ({ block, settings }) => block === 'link' && settings.power_budget !== null,
     otherwise: 'the scenario states no power budget',
     results: [
       ['power.total_W', 'W'],
@@ -141,9 +99,9 @@ export function laterResults(given: Case): Readonly<Record<string, NamedValue>> 
   )
 }
 
-/** What was not asked of these, for the list of what was not examined. A clock block has no link or code. */
+/** What was not asked of these, for the list of what was not examined. A clock block is asked none of them. */
 export function laterNotExamined(given: Case): readonly NotExamined[] {
   return LATER.filter((later) => !later.asked(given))
-    .filter(({ subBlock }) => given.block === 'link' || (subBlock !== 'link' && subBlock !== 'fec'))
+    .filter(() => given.block === 'link')
     .map(({ subBlock, title, otherwise }) => ({ subBlock, title, reason: otherwise }))
 }

@@ -92,6 +92,14 @@ const UNITS: Readonly<Record<string, (x: number) => number>> = {
   µm: (x) => x * 1e-6,
   fF: (x) => x * 1e-15,
   '°C': (x) => x + 273.15,
+  'dBc/Hz': (x) => x,
+  deg: (x) => x,
+  fs: (x) => x * 1e-15,
+  GHz: (x) => x * 1e9,
+  kHz: (x) => x * 1e3,
+  'nV/√Hz': (x) => x * 1e-9,
+  ppm: (x) => x * 1e-6,
+  µA: (x) => x * 1e-6,
 }
 
 /** The SI value of a default such as `0.30 V`; the tests' own small reader. */

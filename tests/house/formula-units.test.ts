@@ -16,7 +16,7 @@ function read(unit: string): string {
     .replace(/³/g, '^3')
     .replace(/[·]/g, '*')
     .replace(/\bbit\/s\b|\bb\/s\b|\bBd\b/g, 'Hz')
-    .replace(/\bdBc\/Hz\b|\bdB\b|\bUI\b|%/g, '1')
+    .replace(/\bdBc\/Hz\b|\bdBc\b|\bdB\b|\bUI\b|%/g, '1')
     .replace(/\/bit\b/g, '')
     .trim()
   return plain.replace(/(?<=[A-Za-z\d)])\s+(?=[A-Za-z(])/g, '*')

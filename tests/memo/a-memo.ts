@@ -16,6 +16,8 @@ notes: Invented setting, for tests.
 block: clock
 oscillator: {kind: LC, range: [10 GHz, 11 GHz]}
 loop: {reference: 100 MHz, floor: -226 dBc/Hz, lock_time: 40 µs}
+jitter_budget: {random: 150 fs, total: 10 ps}
+power_budget: 30 mW
 nodes: [P130, P28]
 options:
   - {id: lc, label: LC oscillator}

@@ -21,6 +21,14 @@ const own = link({ nodes: '[own.yaml]' })
 const many = (count: number, one: (k: number) => string): string =>
   Array.from({ length: count }, (_, k) => one(k)).join(', ')
 
+const CLOCK = 'format: 1\ntitle: A clock\nblock: clock\nnodes: [P28]\n'
+const clock = (more: string): string => `${CLOCK}oscillator: {kind: LC, range: [9 GHz, 10 GHz]}\n${more}\n`
+const measured = (rows: string, more = ''): string =>
+  `${CLOCK}oscillator: {kind: LC, range: [9 GHz, 10 GHz], phase_noise: [${rows}]${more}}\n`
+const measuredFile = (name: string): string =>
+  `${CLOCK}oscillator: {kind: LC, range: [9 GHz, 10 GHz], phase_noise_file: ${name}}\n`
+const CSV = 'offset [Hz],phase noise [dBc/Hz]\n1e3,-80\n1e6,-110\n1e9,-150\n'
+
 const PROVOKED: readonly Provoked[] = [
   ['file.missing', 'an include', link({ include: '[§b.yaml]' })],
   ['file.missing', 'a node file', link({ nodes: '[P28, §none.yaml]' })],
@@ -147,6 +155,65 @@ const PROVOKED: readonly Provoked[] = [
   ['oscillator.missing', 'in a clock block', 'format: 1\ntitle: A clock\nblock: §clock\nnodes: [P28]\n'],
   ['channel.incomplete', 'a loss without frequency', link({ channel: '§{loss: 20 dB}' })],
   ['jitter.incomplete', 'no allowance', link({ jitter_budget: '§{}' })],
+  ['jitter.preset-block', "a lane's in a clock block", clock('jitter_budget: §{preset: ieee-802.3ck-kr}')],
+  [
+    'jitter.preset-block',
+    "a reference clock's in a lane",
+    link({ jitter_budget: '§{preset: pcie-refclk-16g}' }),
+  ],
+  ['jitter.unit-interval', 'random jitter in UI', clock('jitter_budget: §{random: 0.01 UI}')],
+  ['loop.oscillator', 'in a lane', link({ loop: '§{reference: 100 MHz}' })],
+  ['loop.band', 'too narrow', clock('loop: §{reference: 100 MHz, band: [1 MHz, 1.5 MHz]}')],
+  [
+    'profile.order',
+    'unsorted',
+    measured('[1 kHz, -80 dBc/Hz], [1 MHz, -110 dBc/Hz], §[100 kHz, -100 dBc/Hz]'),
+  ],
+  ['profile.order', 'an offset twice', measured('[1 kHz, -80 dBc/Hz], §[1 kHz, -81 dBc/Hz]')],
+  [
+    'number.out-of-range',
+    'a profile above the carrier',
+    measured('[1 kHz, §3 dBc/Hz], [1 GHz, -150 dBc/Hz]'),
+  ],
+  [
+    'profile.short',
+    'a band outside the table',
+    `${CLOCK}loop: {reference: 100 MHz}\noscillator: §{kind: LC, range: [9 GHz, 10 GHz], phase_noise: [[10 kHz, -80 dBc/Hz], [1 MHz, -110 dBc/Hz]]}\n`,
+  ],
+  [
+    'profile.short',
+    'a reference from too far out',
+    clock('loop: §{reference: 100 MHz, reference_noise: [[10 kHz, -140 dBc/Hz], [100 MHz, -160 dBc/Hz]]}'),
+  ],
+  [
+    'profile.twice',
+    'a table and a file',
+    measured('[1 kHz, -80 dBc/Hz], [1 GHz, -150 dBc/Hz]', ', phase_noise_file: §vco.csv'),
+    { 'vco.csv': CSV },
+  ],
+  ['file.missing', 'a profile', measuredFile('§none.csv')],
+  ['csv.form', 'no header', measuredFile('vco.csv'), { 'vco.csv': '§1e3,-80\n1e6,-110\n' }],
+  ['csv.form', 'no unit', measuredFile('vco.csv'), { 'vco.csv': '§offset,phase noise\n1e3,-80\n1e6,-110\n' }],
+  ['csv.form', 'no rows', measuredFile('vco.csv'), { 'vco.csv': '§offset [Hz],phase noise [dBc/Hz]\n' }],
+  [
+    'csv.form',
+    'an open quote',
+    measuredFile('vco.csv'),
+    { 'vco.csv': 'offset [Hz],phase noise [dBc/Hz]\n§"1e3,-80\n' },
+  ],
+  [
+    'unit.unknown',
+    'a unit of a file',
+    measuredFile('vco.csv'),
+    { 'vco.csv': CSV.replace('[Hz]', '[Hertz]').replace('\n1e3', '\n§1e3') },
+  ],
+  [
+    'number.unreadable',
+    'a word in a file',
+    measuredFile('vco.csv'),
+    { 'vco.csv': CSV.replace('-110', '§low') },
+  ],
+  ['profile.order', 'unsorted in a file', measuredFile('vco.csv'), { 'vco.csv': CSV.replace('1e6', '§1e2') }],
 ]
 
 /** The files without the mark, and where it stood. */

@@ -19,7 +19,7 @@ describe('values are held in SI', () => {
       oscillator: '{kind: LC, range: [13 GHz, 15000 MHz]}',
       loop: '{reference: 156.25 MHz, floor: −228 dBc/Hz}',
       process: '{temperature: [-40 °C, 398.15 K]}',
-      jitter_budget: '{random: 150 fs, bounded: 0.15 UI}',
+      jitter_budget: '{random: 150 fs, bounded: 0.15 UI, total: 9 ps}',
       guard: '15 %',
     })
     const { settings } = (await scenario(text)).options[0]!
@@ -29,8 +29,10 @@ describe('values are held in SI', () => {
     expect(settings.process.temperature).toEqual([233.15, 398.15])
     expect(settings.jitter_budget).toMatchObject({
       random: 150e-15,
-      bounded: 0.15,
-      total: null,
+      bounded: null,
+      bounded_ui: 0.15,
+      total: 9e-12,
+      total_ui: null,
       preset: null,
     })
     expect(settings.guard).toBe(0.15)
@@ -74,7 +76,10 @@ describe('uncertain values', () => {
 
   it('law: the spread of a level is a ratio, in dB', async () => {
     const floor = (sigma: string) =>
-      link({ loop: `{reference: 100 MHz, floor: {mean: -228 dBc/Hz, sigma: ${sigma}}}` })
+      link({
+        oscillator: '{kind: LC, range: [13 GHz, 15 GHz]}',
+        loop: `{reference: 100 MHz, floor: {mean: -228 dBc/Hz, sigma: ${sigma}}}`,
+      })
     const { low, typical, high } = at(await scenario(floor('2 dB')), 'loop.floor').spread!
     expect([low, typical, high]).toEqual([
       expect.closeTo(-228 - 2 * 1.6448536269514722, 12),

@@ -1,5 +1,5 @@
 import { choice, count, group, quantity, range, section } from '../schema.ts'
-import { profile } from './link.ts'
+import { profile, profileFile } from './profile.ts'
 
 const COMMON = 'common practice, no source'
 
@@ -175,7 +175,47 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     source: COMMON,
     usedBy: ['ring_oscillator'],
   }),
+  tail_noise: quantity({
+    meaning:
+      'Share of the tail noise power that reaches the tank: 1 without a filter at the tail, 0 with an ideal one.',
+    symbol: 'k_tail',
+    unit: '1',
+    min: 0,
+    max: 1,
+    default: '1',
+    source: COMMON,
+    usedBy: ['loop', 'jitter'],
+  }),
+  flicker_corner: quantity({
+    meaning: "Offset below which the oscillator's noise is flicker noise; by kind of transistor when absent.",
+    symbol: 'f_fl',
+    unit: 'Hz',
+    shown: 'kHz',
+    min: 10,
+    max: 1e8,
+    usedBy: ['loop', 'jitter'],
+  }),
+  noise_excess: quantity({
+    meaning: 'Phase noise of a ring above the least that thermodynamics allow.',
+    symbol: 'X_ring',
+    unit: 'dB',
+    min: 0,
+    max: 30,
+    default: '4 dB',
+    source: COMMON,
+    usedBy: ['loop', 'jitter'],
+  }),
+  pushing: quantity({
+    meaning: 'Supply pushing of the oscillator; by kind and frequency when absent.',
+    symbol: 'K_push',
+    unit: 'Hz/V',
+    shown: 'MHz/V',
+    min: 1e3,
+    max: 2e11,
+    usedBy: ['loop', 'jitter'],
+  }),
   phase_noise: profile('Measured phase noise of the oscillator at its highest frequency.'),
+  phase_noise_file: profileFile('The same as a CSV file.'),
 })
 
 /** The first divider after the oscillator. */
@@ -272,6 +312,17 @@ export const clock = group('The clock path.', {
     source: COMMON,
     usedBy: ['clock_buffers', 'jitter'],
   }),
+  repeater_span: quantity({
+    meaning: 'Length that one buffer of the distribution drives.',
+    symbol: 'l_span',
+    unit: 'm',
+    shown: 'µm',
+    min: 1e-6,
+    max: 5e-3,
+    default: '300 µm',
+    source: COMMON,
+    usedBy: ['jitter', 'power'],
+  }),
   supply_ripple: quantity({
     meaning: 'Supply ripple on the clock path, peak to peak, above the tracking corner.',
     symbol: 'dV_pp',
@@ -279,6 +330,52 @@ export const clock = group('The clock path.', {
     shown: 'mV',
     min: 0,
     max: 0.2,
+    default: '5 mV',
+    source: 'common practice, no source: a regulated clock supply',
+    usedBy: ['jitter'],
+  }),
+  regulator_noise: quantity({
+    meaning: "Noise density of the oscillator's supply.",
+    symbol: 'e_reg',
+    unit: 'V/Hz^0.5',
+    shown: 'nV/√Hz',
+    min: 0,
+    max: 1e-5,
+    default: '10 nV/√Hz',
+    source: COMMON,
+    usedBy: ['loop', 'jitter'],
+  }),
+  supply_tone: section("A tone on the oscillator's supply.", {
+    amplitude: quantity({
+      meaning: 'Its size, peak to peak.',
+      symbol: 'V_pp',
+      unit: 'V',
+      shown: 'mV',
+      min: 1e-7,
+      max: 0.2,
+      required: true,
+      usedBy: ['jitter'],
+    }),
+    frequency: quantity({
+      meaning: 'Its frequency.',
+      symbol: 'f_m',
+      unit: 'Hz',
+      shown: 'MHz',
+      min: 1,
+      max: 1e10,
+      required: true,
+      usedBy: ['jitter'],
+    }),
+  }),
+  phase_error: quantity({
+    meaning: 'Duty-cycle or phase error between the phases that is left after correction, in clock periods.',
+    symbol: 'e_ph',
+    unit: '1',
+    shown: '%',
+    min: 0,
+    max: 0.1,
+    default: '0.5 %',
+    source: COMMON,
     usedBy: ['jitter'],
   }),
 })
@@ -295,6 +392,13 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     required: true,
     usedBy: ['loop'],
   }),
+  kind: choice(['type-II', 'realigned'], {
+    meaning:
+      'A type-II loop of third order, or an oscillator that the reference realigns or locks by injection.',
+    default: 'type-II',
+    source: COMMON,
+    usedBy: ['loop'],
+  }),
   detector: choice(['charge-pump', 'sampling', 'sub-sampling'], {
     meaning: 'Kind of phase detector.',
     default: 'charge-pump',
@@ -302,12 +406,31 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     usedBy: ['loop'],
   }),
   floor: quantity({
-    meaning: 'Normalised in-band phase-noise floor of the detector.',
+    meaning: 'Normalised in-band phase-noise floor of the detector; by its kind when absent.',
     symbol: 'L_n',
     unit: 'dBc/Hz',
     min: -280,
     max: -150,
-    usedBy: ['loop'],
+    usedBy: ['loop', 'jitter'],
+  }),
+  flicker: quantity({
+    meaning:
+      'Normalised flicker noise of the detector, at 10 kHz from a 1 GHz carrier; by its kind when absent.',
+    symbol: 'L_nf',
+    unit: 'dBc/Hz',
+    min: -200,
+    max: -60,
+    usedBy: ['loop', 'jitter'],
+  }),
+  phase_margin: quantity({
+    meaning: 'Phase margin that the filter is designed for, before the delay of sampling.',
+    symbol: 'phi_m',
+    unit: 'deg',
+    min: 20,
+    max: 80,
+    default: '60 deg',
+    source: COMMON,
+    usedBy: ['loop', 'jitter'],
   }),
   bandwidth: quantity({
     meaning: 'Loop bandwidth (unity gain); the best one is found when absent.',
@@ -325,10 +448,12 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     shown: 'µA',
     min: 1e-7,
     max: 0.1,
+    default: '500 µA',
+    source: COMMON,
     usedBy: ['loop'],
   }),
   tuning_gain: quantity({
-    meaning: 'Tuning gain of the oscillator.',
+    meaning: 'Tuning gain of the oscillator; by its kind and frequency when absent.',
     symbol: 'K_V',
     unit: 'Hz/V',
     shown: 'MHz/V',
@@ -345,49 +470,183 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 1,
     usedBy: ['loop'],
   }),
-  reference_noise: profile('Measured phase noise of the reference at its own frequency.'),
+  lock_tolerance: quantity({
+    meaning: 'Frequency error that counts as locked.',
+    symbol: 'tol_f',
+    unit: '1',
+    shown: 'ppm',
+    min: 1e-9,
+    max: 0.01,
+    default: '10 ppm',
+    source: COMMON,
+    usedBy: ['loop'],
+  }),
+  tuning_voltage: quantity({
+    meaning: 'Voltage over which the oscillator is tuned.',
+    symbol: 'V_tune',
+    unit: 'V',
+    min: 0.01,
+    max: 3,
+    default: '0.4 V',
+    source: COMMON,
+    usedBy: ['loop'],
+  }),
+  reference_floor: quantity({
+    meaning: 'Phase-noise floor of the reference at its own frequency.',
+    symbol: 'L_ref',
+    unit: 'dBc/Hz',
+    min: -190,
+    max: -60,
+    default: '-160 dBc/Hz',
+    source: 'common practice, no source: a good crystal oscillator',
+    usedBy: ['loop', 'jitter'],
+  }),
+  reference_noise: profile(
+    'Measured phase noise of the reference at its own frequency, in place of the floor.',
+  ),
+  reference_noise_file: profileFile('The same as a CSV file.'),
+  reference_buffers: count({
+    meaning: 'Full-swing buffers between the reference and the detector.',
+    symbol: 'n_g',
+    min: 0,
+    max: 40,
+    default: 2,
+    source: COMMON,
+    usedBy: ['loop', 'jitter'],
+  }),
+  divider_floor: quantity({
+    meaning:
+      'Phase-noise floor of the feedback divider at its output; that of its retiming stage when absent.',
+    symbol: 'L_div',
+    unit: 'dBc/Hz',
+    min: -190,
+    max: -60,
+    usedBy: ['loop', 'jitter'],
+  }),
+  fractional: choice(['by-ratio', 'yes'], {
+    meaning: 'Whether a modulator makes a fractional ratio: `by-ratio` when the ratio is not whole.',
+    default: 'by-ratio',
+    source: 'method of this planner',
+    usedBy: ['loop', 'jitter'],
+  }),
+  modulator_order: count({
+    meaning: 'Order of the modulator of a fractional loop.',
+    symbol: 'm_mod',
+    min: 1,
+    max: 5,
+    default: 3,
+    source: COMMON,
+    usedBy: ['loop', 'jitter'],
+  }),
+  modulator_cancellation: quantity({
+    meaning: "How far the modulator's noise is cancelled ahead of the filter.",
+    symbol: 'X_mod',
+    unit: 'dB',
+    min: 0,
+    max: 60,
+    default: '0 dB',
+    source: COMMON,
+    usedBy: ['loop', 'jitter'],
+  }),
+  reference_spur: quantity({
+    meaning: 'Reference spur of the output. Writing it adds its jitter.',
+    symbol: 'S_ref',
+    unit: 'dBc',
+    min: -200,
+    max: -10,
+    usedBy: ['jitter'],
+  }),
+  band: range({
+    meaning: 'Offsets over which phase noise is integrated.',
+    symbol: 'f_band',
+    unit: 'Hz',
+    shown: 'kHz',
+    min: 1,
+    max: 2e10,
+    default: ['1 kHz', '1 GHz'],
+    source: COMMON,
+    usedBy: ['loop', 'jitter'],
+  }),
 })
+
+/** Open interface standards whose allowances are known. */
+export const PRESETS = [
+  'ieee-802.3ap-kr',
+  'ieee-802.3bj-kr4',
+  'ieee-802.3bj-kp4',
+  'ieee-802.3bs-c2c',
+  'ieee-802.3cd-kr',
+  'ieee-802.3cd-cr',
+  'ieee-802.3ck-kr',
+  'ieee-802.3ck-cr',
+  'ieee-802.3ck-c2c',
+  'ieee-802.3dj-kr',
+  'oif-cei-28g-sr',
+  'oif-cei-56g-lr',
+  'oif-cei-112g-lr',
+  'pcie-8g',
+  'pcie-16g',
+  'pcie-32g',
+  'pcie-refclk-8g',
+  'pcie-refclk-16g',
+  'pcie-refclk-32g',
+  'pcie-refclk-64g',
+  'jesd204b-11g',
+] as const
+export type PresetId = (typeof PRESETS)[number]
+
+/** An allowance in time, and the same in unit intervals: what is written in UI is read as the latter. */
+function allowance<const N extends string>(
+  name: N,
+  what: string,
+  symbol: string,
+  min: number,
+  max: number,
+): Record<N, ReturnType<typeof inTime>> & Record<`${N}_ui`, ReturnType<typeof inIntervals>> {
+  return {
+    [name]: inTime(what, symbol, min, max, `${name}_ui`),
+    [`${name}_ui`]: inIntervals(what, symbol),
+  } as never
+}
+const inTime = (what: string, symbol: string, min: number, max: number, inUI: string) =>
+  quantity({
+    meaning: `${what}; in time or in UI.`,
+    symbol,
+    unit: 's',
+    shown: 'fs',
+    min,
+    max,
+    inUI,
+    usedBy: ['jitter'],
+  })
+const inIntervals = (what: string, symbol: string) =>
+  quantity({
+    meaning: `${what}, in unit intervals.`,
+    symbol: `${symbol}_UI`,
+    unit: 'UI',
+    min: 0.0001,
+    max: 1,
+    usedBy: ['jitter'],
+  })
 
 /** Allowed jitter. */
 export const jitterBudget = section('Jitter allowances. Writing it asks for the budget.', {
-  preset: choice(
-    [
-      'ieee-802.3ap-kr',
-      'ieee-802.3bj-kr4',
-      'ieee-802.3bs-c2c',
-      'ieee-802.3cd-kr',
-      'ieee-802.3ck-kr',
-      'ieee-802.3ck-c2c',
-      'oif-cei-28g-sr',
-      'oif-cei-56g-lr',
-      'oif-cei-112g-lr',
-      'jesd204b-11g',
-    ],
-    { meaning: 'Allowances of an open interface standard.', usedBy: ['jitter'] },
-  ),
-  random: quantity({
-    meaning: 'Allowed random jitter, rms.',
-    symbol: 'RJ',
-    unit: 's',
-    shown: 'fs',
-    min: 1e-16,
-    max: 1e-8,
+  preset: choice(PRESETS, {
+    meaning: 'Allowances of an open interface standard.',
     usedBy: ['jitter'],
   }),
-  bounded: quantity({
-    meaning: 'Allowed bounded jitter, peak to peak.',
-    symbol: 'DJ',
-    unit: 'UI',
-    min: 0,
-    max: 1,
-    usedBy: ['jitter'],
-  }),
-  total: quantity({
-    meaning: 'Allowed total jitter at the error target, peak to peak.',
-    symbol: 'TJ',
-    unit: 'UI',
-    min: 0,
-    max: 1,
-    usedBy: ['jitter'],
+  ...allowance('random', 'Allowed random jitter, rms', 'RJ', 1e-16, 1e-8),
+  ...allowance('bounded', 'Allowed bounded jitter, peak to peak', 'DJ', 1e-15, 1e-7),
+  ...allowance('total', 'Allowed total jitter at the error target, peak to peak', 'TJ', 1e-15, 1e-7),
+  ...allowance('even_odd', 'Allowed even-odd jitter, peak to peak', 'EOJ', 1e-15, 1e-7),
+  tracking: quantity({
+    meaning:
+      'Corner below which the receiver tracks jitter. When absent: 4 MHz behind PAM-4 and PAM-8, 10 MHz behind PAM-2 from 20 GBd, else f_B/1667; a clock block is not tracked.',
+    symbol: 'f_CDR',
+    unit: 'Hz',
+    shown: 'MHz',
+    min: 1,
+    max: 1e9,
+    usedBy: ['jitter', 'loop'],
   }),
 })

@@ -1,4 +1,4 @@
-import { choice, count, group, list, quantity, rows, section, text } from '../schema.ts'
+import { choice, count, group, list, quantity, section, text } from '../schema.ts'
 
 const COMMON = 'common practice, no source'
 
@@ -235,6 +235,36 @@ export const receiver = group('The receiver: equaliser, decision and feedback.',
     default: 'yes',
     source: COMMON,
     usedBy: ['interpolator'],
+  }),
+  interpolator_steps: count({
+    meaning: 'Steps of the phase interpolators in one symbol.',
+    symbol: 'n_step',
+    min: 4,
+    max: 1024,
+    default: 64,
+    source: COMMON,
+    usedBy: ['jitter'],
+  }),
+  hunting_steps: count({
+    meaning:
+      'Interpolator steps over which the recovered clock hunts, peak to peak: one each way and its latency.',
+    symbol: 'n_hunt',
+    min: 0,
+    max: 64,
+    default: 3,
+    source: 'common practice, no source: one step each way and one for the latency',
+    usedBy: ['jitter'],
+  }),
+  aperture: quantity({
+    meaning: 'Random aperture jitter of the samplers, rms.',
+    symbol: 'sigma_ap',
+    unit: 's',
+    shown: 'fs',
+    min: 0,
+    max: 1e-10,
+    default: '50 fs',
+    source: COMMON,
+    usedBy: ['jitter'],
   }),
   converter: group('The converter of a converter-based receiver.', {
     slicer_snr: quantity({
@@ -496,17 +526,9 @@ export const examine = list({
     'interpolator',
     'transmit_pad',
     'receive_pad',
+    'loop',
+    'jitter',
+    'power',
   ],
-  longest: 20,
+  longest: 24,
 })
-
-/** A measured profile of offset and phase noise. */
-export const profile = (meaning: string) =>
-  rows({
-    meaning,
-    columns: [
-      { name: 'offset', unit: 'Hz', min: 1, max: 1e11 },
-      { name: 'phase noise', unit: 'dBc/Hz', min: -220, max: -1 },
-    ],
-    longest: 500,
-  })
