@@ -7,6 +7,7 @@ import type { Settings } from '../scenario/keys/index.ts'
 import type { UserRule } from '../scenario/rule-formula.ts'
 import type { Kept } from './kept.ts'
 import { type Rates, ratesOf } from './rates.ts'
+import type { Watch } from './watch.ts'
 
 /** One case: an option in a node. Nothing in it depends on the operating point. */
 export interface Case {
@@ -16,6 +17,8 @@ export interface Case {
   readonly rules: Readonly<Partial<Record<string, UserRule>>>
   /** What one evaluation of the case found and need not find again; absent: everything is found anew. */
   readonly kept?: Kept
+  /** Listens to what is read, when the settings tell it. */
+  readonly watch?: Watch
 }
 
 /** The supply and the transistor of the stacked stages, or why there is none. */
@@ -86,7 +89,6 @@ export function benchAt(given: Case, at: OperatingPoint, t: Trace): Bench {
     at.tol_V,
     settings.supply.ir_drop,
   )
-  const states = new Map<unknown, unknown>()
   const bench: Bench = {
     ...given,
     at,
@@ -98,13 +100,30 @@ export function benchAt(given: Case, at: OperatingPoint, t: Trace): Bench {
     stack: stackSupply(given, at, nmos, t),
     guard: settings.guard,
     peak: peakTransitFrequency(node, t),
-    once: <T>(prepare: (bench: Bench) => T): T => {
-      if (!states.has(prepare)) states.set(prepare, prepare(bench))
-      return states.get(prepare) as T
-    },
+    once: (prepare) => once(prepare),
   }
+  const once = onceOf(bench)
   return bench
 }
+
+/** Prepares each state once; whoever uses it counts as reading what it was prepared from. */
+function onceOf(bench: Bench): Bench['once'] {
+  const { watch } = bench
+  const states = new Map<unknown, { readonly value: unknown; readonly read: ReadonlySet<string> }>()
+  return <T>(prepare: (bench: Bench) => T): T => {
+    const known = states.get(prepare)
+    if (known !== undefined) {
+      watch?.add(known.read)
+      return known.value as T
+    }
+    const found =
+      watch === undefined ? { value: prepare(bench), read: NOTHING } : watch.during(() => prepare(bench))
+    states.set(prepare, found)
+    return found.value
+  }
+}
+
+const NOTHING: ReadonlySet<string> = new Set()
 
 function stackSupply(given: Case, at: OperatingPoint, nmos: DeviceHere, t: Trace): StackSupply {
   const { settings, node } = given

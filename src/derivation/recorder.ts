@@ -70,7 +70,8 @@ export class Recorder implements Trace {
   /** Places of the drafts by value, in the order written. */
   readonly #places = new Map<number, number[]>()
   readonly #known: KnownLeaves
-  readonly #shown: number[] = []
+  /** Steps that show a search was solved, by the place of its root. */
+  readonly #shown = new Map<number, number[]>()
 
   constructor(known: KnownLeaves) {
     this.#known = known
@@ -116,8 +117,11 @@ export class Recorder implements Trace {
     return value
   }
 
-  show(value: number): void {
-    this.#shown.push(value)
+  show(value: number, of: number): void {
+    const root = this.#find('', of)
+    const known = this.#shown.get(root)
+    if (known === undefined) this.#shown.set(root, [this.#find('', value)])
+    else known.push(this.#find('', value))
   }
 
   /** Where the step with this value stands; prefers one of the same symbol, then the latest. */
@@ -168,7 +172,7 @@ export class Recorder implements Trace {
     mark(required, 'required')
     mark(available, 'available')
     mark(margin, 'margin')
-    const shown = [...this.#shown, ...alsoShown].map((value) => this.#find('', value))
+    const shown = alsoShown.map((value) => this.#find('', value))
     return this.#number(this.#ordered(ends, shown), ends)
   }
 
@@ -178,6 +182,7 @@ export class Recorder implements Trace {
       if (kept.has(k)) return
       kept.add(k)
       for (const source of Object.values(this.#drafts[k]!.from)) keep(source)
+      for (const shows of this.#shown.get(k) ?? []) keep(shows)
     }
     for (const k of [...ends.keys(), ...shown]) keep(k)
     const inner = [...kept].filter((k) => !ends.has(k))

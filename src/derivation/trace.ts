@@ -51,8 +51,8 @@ export interface Trace {
   expression(about: UserExpression, value: number, inputs: Readonly<Record<string, number>>): number
   /** Notes the result of a numeric procedure; `inputs` are the numbers it was given. */
   kernel(about: Procedure, value: number, inputs?: Readonly<Record<string, number>>): number
-  /** Keeps the derivation of a value that shows a search was solved, though no result rests on it. */
-  show(value: number): void
+  /** Keeps the derivation of a value that shows a search was solved, wherever the root `of` that search is used. */
+  show(value: number, of: number): void
   /** True when steps are being written down: lets callers build `inputs` only then. */
   readonly recording: boolean
 }

@@ -95,7 +95,7 @@ function noteDensity(J: number, stage: Stage, binding: Line, V: number, t: Trace
     { ...stage.givens, V },
   )
   const bySwing = binding === 'gain–swing' && stage.swingNeeded !== undefined
-  t.show(bySwing ? stage.swingNeeded(J, t) : stage.supplyNeeded(J, t))
+  t.show(bySwing ? stage.swingNeeded(J, t) : stage.supplyNeeded(J, t), J)
   return J
 }
 

@@ -87,7 +87,15 @@ export function gateVoltageAt(device: DeviceHere, J: number, V_S: number, t: Tra
 
 /** As above, for callers that already know the charge. */
 export function gateVoltageOf(device: DeviceHere, J: number, { q_s }: Charge, V_S: number, t: Trace): number {
+  if (V_S === 0) t.leaf(AT_GROUND, V_S)
   return t.calc(gateVoltage, device.V_T, device.of.n, V_S, device.U_T, q_s, J, device.of.R_s)
+}
+
+const AT_GROUND = {
+  symbol: 'V_S',
+  meaning: 'source at the potential of the bulk',
+  unit: 'V',
+  source: 'definition',
 }
 
 /** Root in ln q_s: at most what the voltage gives without source resistance, seldom e⁶ times less. */

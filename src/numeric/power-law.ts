@@ -7,7 +7,7 @@
  * h²/12 times the mean curvature of its logarithm.
  */
 
-/** Exponents closer to −1 than this use the limit ln(x2/x1). */
+/** Segments over which x y changes by less than this, relatively, use the limit of the exponent −1. */
 const NEAR = 1e-6
 
 /**
@@ -37,10 +37,60 @@ export function powerLawIntegral(
 
 function segment(x1: number, y1: number, x2: number, y2: number): number {
   if (!(y1 > 0 && y2 > 0)) return ((x2 - x1) * (y1 + y2)) / 2
-  const span = Math.log(x2 / x1)
-  const next = Math.log(y2 / y1) / span + 1
-  if (Math.abs(next) * span < NEAR) return ((x1 * y1 + x2 * y2) / 2) * span
-  return (x2 * y2 - x1 * y1) / next
+  return area(x1 * y1, x2 * y2, Math.log(x2 / x1), Math.log(y2 / y1))
+}
+
+/** Area of a segment from x y at its ends and the logarithms of the ratios of x and y. */
+function area(low: number, high: number, span: number, rise: number): number {
+  const next = rise + span
+  return Math.abs(next) < NEAR ? ((low + high) / 2) * span : ((high - low) * span) / next
+}
+
+/** Places whose segments are measured once for many integrals. */
+export interface Places {
+  readonly x: Float64Array
+  readonly inverse: Float64Array
+  /** ln(x2/x1) of each segment. */
+  readonly span: Float64Array
+}
+
+/** Measures rising positive places. */
+export const placesOf = (x: Float64Array): Places => ({ x, inverse: x.map((at) => 1 / at), span: risesOf(x) })
+
+/** ln(y2/y1) of each segment; y above 0. */
+export function risesOf(y: Float64Array): Float64Array {
+  const rises = new Float64Array(Math.max(0, y.length - 1))
+  for (let k = 0; k < rises.length; k++) rises[k] = Math.log(y[k + 1]! / y[k]!)
+  return rises
+}
+
+/**
+ * Integrals of y, y/x, y/x² and so on, piecewise in log-log, with the logarithms taken once.
+ *
+ * @param places the places
+ * @param y values above 0 there
+ * @param rises their {@link risesOf}
+ * @param most largest power n of 1/x^n
+ * @returns the integrals for n = 0 to `most`
+ */
+export function powerLawMoments(
+  { x, inverse, span }: Places,
+  y: Float64Array,
+  rises: Float64Array,
+  most: number,
+): readonly number[] {
+  const sums: number[] = []
+  const powers = new Float64Array(x.length)
+  for (let k = 0; k < powers.length; k++) powers[k] = x[k]! * y[k]!
+  for (let n = 0; n <= most; n++) {
+    let sum = 0
+    for (let k = 0; k < span.length; k++) {
+      sum += area(powers[k]!, powers[k + 1]!, span[k]!, rises[k]! - n * span[k]!)
+    }
+    sums.push(sum)
+    for (let k = 0; k < powers.length; k++) powers[k]! *= inverse[k]!
+  }
+  return sums
 }
 
 /**

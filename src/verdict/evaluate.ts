@@ -10,11 +10,11 @@ import type { OptionInput, Scenario } from '../scenario/checked.ts'
 import { answerOf } from './answer.ts'
 import { type Asking, askedOf } from './asked.ts'
 import { assumptionsOf, methodAssumptions } from './assumptions.ts'
-import { type FailingEnd, failingEnds } from './ends.ts'
-import { stepsOf } from './explain.ts'
+import { type FailingEnd, judged } from './ends.ts'
+import { explaining } from './explain.ts'
 import { laterChecks, laterNotExamined, laterResults } from './later.ts'
-import { givenLeaves, knownLeaves } from './leaves.ts'
-import { outcomesAt, type Worst, worstOf } from './margins.ts'
+import { givenLeaves } from './leaves.ts'
+import { outcomesAt, type Worst } from './margins.ts'
 import { type CasePoints, casePoints } from './points.ts'
 import {
   type CaseResult,
@@ -77,14 +77,13 @@ export function evaluateCase(plain: Case, option: OptionInput, node: Node, about
   const given = { ...plain, kept: plain.kept ?? keeping() }
   const asking = askedOf(given)
   const points = casePoints(given.settings, given.node)
-  const worst = worstOf(given, asking, points)
   const typical = outcomesAt(given, asking, points.typical)
-  const ends = failingEnds(given, asking, option.provenance)
-  const leaves = about.explain ? givenLeaves(option.provenance, node.provenance) : null
+  const { worst, ends } = judged(given, asking, option.provenance)
+  const explain = about.explain ? explaining(given, givenLeaves(option.provenance, node.provenance)) : null
   const computed = flatChecks(asking).map(({ block, check }, k) => {
     const spec = asking.blocks[block]!.block
     const { at, outcome } = worst[k]!
-    const steps = leaves === null ? [] : stepsOf(given, spec, check, at, knownLeaves(leaves, at))
+    const steps = explain === null ? [] : explain(spec, check, at)
     const { title, quantity, unit, sense, name } = spec.checks[check]!
     const result: CheckResult = {
       id: `${spec.id}.${name}`,

@@ -1,22 +1,40 @@
-import { benchAt, type Case } from '../blocks/bench.ts'
+import { type Bench, benchAt, type Case } from '../blocks/bench.ts'
 import type { AnySubBlock } from '../blocks/sub-block.ts'
 import { type KnownLeaves, Recorder, type Step } from '../derivation/recorder.ts'
 import type { OperatingPoint } from '../device/conditions.ts'
+import { knownLeaves } from './leaves.ts'
+
+/** Writes down the steps of one check of a sub-block at an operating point. */
+export type Explaining = (block: AnySubBlock, check: number, at: OperatingPoint) => readonly Step[]
 
 /**
- * Runs one check again, this time writing down every step. Same functions, same bits.
+ * Runs checks again, this time writing down every step. Same functions, same bits. Checks of a sub-block at the
+ * same operating point share what they rest on, so that it runs once.
  *
- * Errors: throws when a number cannot be traced to its origin, a fault of the program.
+ * Errors: what is returned throws when a number cannot be traced to its origin, a fault of the program.
+ *
+ * @param given the case
+ * @param leaves numbers that scenario and node give
  */
-export function stepsOf(
-  given: Case,
-  block: AnySubBlock,
-  check: number,
-  at: OperatingPoint,
-  known: KnownLeaves,
-): readonly Step[] {
-  const recorder = new Recorder(known)
-  const [outcome] = block.outcomes(benchAt(given, at, recorder), [check])
-  if (outcome === undefined) return []
-  return recorder.steps(outcome.required, outcome.available, outcome.margin, outcome.alsoShown)
+export function explaining(given: Case, leaves: KnownLeaves): Explaining {
+  const begun = new Map<AnySubBlock, Map<OperatingPoint, Recorded>>()
+  return (block, check, at) => {
+    const ofBlock = begun.get(block) ?? new Map<OperatingPoint, Recorded>()
+    begun.set(block, ofBlock)
+    const { bench, recorder } = ofBlock.get(at) ?? recordedAt(given, at, leaves)
+    ofBlock.set(at, { bench, recorder })
+    const [outcome] = block.outcomes(bench, [check])
+    if (outcome === undefined) return []
+    return recorder.steps(outcome.required, outcome.available, outcome.margin, outcome.alsoShown)
+  }
+}
+
+interface Recorded {
+  readonly bench: Bench
+  readonly recorder: Recorder
+}
+
+function recordedAt(given: Case, at: OperatingPoint, leaves: KnownLeaves): Recorded {
+  const recorder = new Recorder(knownLeaves(leaves, at))
+  return { bench: benchAt(given, at, recorder), recorder }
 }

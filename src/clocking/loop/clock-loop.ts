@@ -3,7 +3,7 @@ import type { RouteOutcome } from '../../blocks/sub-block.ts'
 import { PLAIN } from '../../derivation/trace.ts'
 import { filterRoot, type Sources, sourcesAt } from '../noise/sources.ts'
 import { trackingCorner } from '../path/tracking.ts'
-import { type LoopIntegrals, loopIntegrals, type ShapeIntegrals } from './integrals.ts'
+import { type LoopIntegrals, loopGrid, loopIntegrals, type ShapeIntegrals } from './integrals.ts'
 import { type LineJitters, lineJitters, sumOf } from './line-jitter.ts'
 import { bestBandwidth, type Optimum } from './optimum.ts'
 import { type LoopProblem, numbersOf } from './problem.ts'
@@ -143,18 +143,19 @@ function givensOf(s: Sources, f_most: number): Readonly<Record<string, number>> 
 }
 
 function integralsAt({ kept }: Bench, problem: LoopProblem, f_c: number): LoopIntegrals {
-  const find = (): LoopIntegrals => loopIntegrals(problem, f_c)
-  if (kept === undefined) return find()
-  const { low, high } = problem
-  // Integrals of unit shapes depend on the shape of the loop only, so coefficients are left out.
-  const shape: LoopProblem = {
-    ...problem,
-    low: { ...low, flat: 0, flicker: 0, scale: 0, modulator: low.modulator > 0 ? 1 : 0 },
-    high: { ...high, flat: 0, flicker: 0, white: 0, flicker3: 0, scale: 0 },
-    filter: problem.filter > 0 ? 1 : 0,
-  }
-  return kept.of('integrals', [...numbersOf(shape), f_c], find)
+  if (kept === undefined) return loopIntegrals(problem, f_c)
+  const shape = numbersOf(unitSources(problem))
+  const grid = kept.of('grid', shape, () => loopGrid(problem))
+  return kept.of('integrals', [...shape, f_c], () => loopIntegrals(problem, f_c, grid))
 }
+
+/** The same loop with sources of size one: integrals of unit shapes depend on nothing else. */
+const unitSources = (problem: LoopProblem): LoopProblem => ({
+  ...problem,
+  low: { ...problem.low, flat: 0, flicker: 0, scale: 0, modulator: problem.low.modulator > 0 ? 1 : 0 },
+  high: { ...problem.high, flat: 0, flicker: 0, white: 0, flicker3: 0, scale: 0 },
+  filter: problem.filter > 0 ? 1 : 0,
+})
 
 const SHAPES = {
   low0: ['I_l0', '∫|H|² df', 'Hz'],

@@ -1,11 +1,14 @@
 import type { Bench } from '../../blocks/bench.ts'
 import { PLAIN } from '../../derivation/trace.ts'
+import type { Sources } from '../noise/sources.ts'
 import { type ClockLoop, optimumOf } from './clock-loop.ts'
 import { loopIntegrals } from './integrals.ts'
 import { lineJitters, sumOf } from './line-jitter.ts'
+import { noiseOver } from './optimum.ts'
+import type { LoopProblem } from './problem.ts'
 import { guardedBandwidth } from './shape.ts'
 
-/** The bandwidth of the least jitter, and how much jitter other bandwidths give. SI. */
+/** The bandwidth of the least jitter before any tracking, and how much jitter other bandwidths give. SI. */
 export interface Flatness {
   readonly f_opt: number
   readonly atLimit: boolean
@@ -17,18 +20,25 @@ export interface Flatness {
 
 /** The optimum of a loop and its flatness; null for a realigned oscillator, whose bandwidth its reference gives. */
 export function flatnessOf(loop: ClockLoop, bench: Bench): Flatness | null {
-  const { f_lim, problem, sources } = loop
+  const { f_lim, problem, sources, atLimit } = loop
   if (f_lim === null) return null
-  const best = optimumOf(bench, problem, guardedBandwidth.run(f_lim, bench.guard))
-  const at = (f_c: number): number => {
-    const { plain, tracked } = loopIntegrals(problem, f_c)
-    return sumOf(lineJitters(sources, tracked ?? plain, f_c, PLAIN), PLAIN)
-  }
+  const stated = atLimit === null
+  const best = stated
+    ? optimumOf(bench, problem, guardedBandwidth.run(f_lim, bench.guard))
+    : { f_c: loop.f_c, atLimit }
+  const sigma_opt = stated ? jitterAt(problem, sources, best.f_c) : loop.sigma_plain
+  const noise = noiseOver(problem)
+  const at = (f_c: number): number => sigma_opt * Math.sqrt(noise(f_c) / noise(best.f_c))
   return {
     f_opt: best.f_c,
     atLimit: best.atLimit,
-    sigma_opt: at(best.f_c),
+    sigma_opt,
     sigma_half: at(best.f_c / 2),
     sigma_double: at(best.f_c * 2),
   }
+}
+
+function jitterAt(problem: LoopProblem, sources: Sources, f_c: number): number {
+  const { plain } = loopIntegrals(problem, f_c)
+  return sumOf(lineJitters(sources, plain, f_c, PLAIN), PLAIN)
 }
