@@ -76,8 +76,10 @@ function stage({ file, content }: Written): { readonly part: string; readonly fi
   try {
     const handle = openSync(part, 'w')
     try {
-      const bytes = typeof content === 'string' ? new TextEncoder().encode(content) : content
-      for (let done = 0; done < bytes.length; ) done += writeSync(handle, bytes, done)
+      const parts = typeof content === 'string' ? [new TextEncoder().encode(content)] : content
+      for (const bytes of parts) {
+        for (let done = 0; done < bytes.length; ) done += writeSync(handle, bytes, done)
+      }
       fsyncSync(handle)
     } finally {
       closeSync(handle)

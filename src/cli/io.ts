@@ -19,7 +19,7 @@ export class FileFault extends Error {
 /** One file to be written. */
 export interface Written {
   readonly file: string
-  readonly content: string | Uint8Array
+  readonly content: string | Iterable<Uint8Array>
 }
 
 /** The only door to files. Paths are absolute or relative to the working directory of the process. */

@@ -67,6 +67,7 @@ type Draft = Omit<Step, 'id' | 'from'> & { from: Record<string, number> }
 export class Recorder implements Trace {
   readonly recording = true
   readonly #drafts: Draft[] = []
+  readonly #steps: Step[] = []
   /** Places of the drafts by value, in the order written. */
   readonly #places = new Map<number, number[]>()
   readonly #known: KnownLeaves
@@ -173,7 +174,10 @@ export class Recorder implements Trace {
     mark(available, 'available')
     mark(margin, 'margin')
     const shown = alsoShown.map((value) => this.#find('', value))
-    return this.#number(this.#ordered(ends, shown), ends)
+    return this.#ordered(ends, shown).map((k) => {
+      const role = ends.get(k)
+      return role === undefined ? this.#made(k) : { ...this.#made(k), yields: role }
+    })
   }
 
   #ordered(ends: ReadonlyMap<number, string>, shown: readonly number[]): readonly number[] {
@@ -194,16 +198,20 @@ export class Recorder implements Trace {
     return [...inner.sort(ascending), ...[...ends.keys()].sort(ascending)]
   }
 
-  #number(order: readonly number[], ends: ReadonlyMap<number, NonNullable<Step['yields']>>): readonly Step[] {
-    const ids = new Map(order.map((k, place) => [k, `s${place + 1}`]))
-    return order.map((k) => {
-      const draft = this.#drafts[k]!
-      const from = Object.fromEntries(Object.entries(draft.from).map(([name, j]) => [name, ids.get(j)!]))
-      const role = ends.get(k)
-      return { ...draft, id: ids.get(k)!, from, ...(role === undefined ? {} : { yields: role }) }
-    })
+  /** The step at a place; the same object in every check that rests on it. */
+  #made(k: number): Step {
+    const known = this.#steps[k]
+    if (known !== undefined) return known
+    const draft = this.#drafts[k]!
+    const from: Record<string, string> = {}
+    for (const [name, j] of Object.entries(draft.from)) from[name] = idOf(j)
+    const step = { ...draft, id: idOf(k), from }
+    this.#steps[k] = step
+    return step
   }
 }
+
+const idOf = (k: number): string => `s${k + 1}`
 
 /** True when a step was already written down: the same expression over the same numbers. */
 function same(

@@ -1,5 +1,5 @@
 import type { Result } from '../verdict/result.ts'
-import { bytesOf, joinedBytes } from './bytes.ts'
+import { bytesOf } from './bytes.ts'
 
 /** From the result down to the steps of a check: what lies deeper stands on one line. */
 const DEPTH_OF_A_STEP = 6
@@ -10,10 +10,13 @@ const DEPTH_OF_A_CASE = 4
  * The result as JSON in UTF-8, one step of a derivation a line: a line by line comparison of two memos then
  * shows what moved, at half the size that indenting everything would take.
  */
-export function resultJson(result: Result): Uint8Array {
-  const parts: Uint8Array[] = []
-  for (const text of spread(result, DEPTH_OF_A_STEP)) parts.push(bytesOf(text))
-  return joinedBytes([...parts, bytesOf('\n')])
+export function resultJson(result: Result): Iterable<Uint8Array> {
+  return {
+    *[Symbol.iterator]() {
+      for (const text of spread(result, DEPTH_OF_A_STEP)) yield bytesOf(text)
+      yield bytesOf('\n')
+    },
+  }
 }
 
 /** The text in pieces: a long memo would take many times its size as one string. */

@@ -22,7 +22,8 @@ export interface MemoResources {
 /** One file of a memo: the ending of its name and what stands in it. */
 export interface MemoFile {
   readonly ending: string
-  readonly content: Uint8Array
+  /** Stretches of bytes, to be written one after another; made as they are asked for where the whole is large. */
+  readonly content: Iterable<Uint8Array>
 }
 
 /**
@@ -55,16 +56,16 @@ async function filesOf(
   if (format === 'json') return [{ ending: 'json', content: resultJson(result) }]
   if (format === 'csv') {
     return [
-      { ending: 'csv', content: bytesOf(checksCsv(result)) },
-      { ending: 'assumptions.csv', content: bytesOf(assumptionsCsv(result)) },
+      { ending: 'csv', content: [bytesOf(checksCsv(result))] },
+      { ending: 'assumptions.csv', content: [bytesOf(assumptionsCsv(result))] },
     ]
   }
   if (model === null) return []
   if (format === 'html') {
     const { toHtml } = await import('./html/page.ts')
-    return [{ ending: 'html', content: bytesOf(await toHtml(model, templates, tool)) }]
+    return [{ ending: 'html', content: [bytesOf(await toHtml(model, templates, tool))] }]
   }
   const { memoPdf } = await import('./pdf/memo-pdf.ts')
   const about = { tool, date: result.scenario.date, authors: result.scenario.authors }
-  return [{ ending: 'pdf', content: await memoPdf(model, about, fonts, paper) }]
+  return [{ ending: 'pdf', content: [await memoPdf(model, about, fonts, paper)] }]
 }

@@ -45,10 +45,21 @@ function objectOf(keys: Keys, of: Of): Schema {
   return {
     type: 'object',
     properties: Object.fromEntries(
-      Object.entries(keys).map(([name, key]) => [name, { description: key.meaning, ...schemaOf(key, of) }]),
+      Object.entries(keys).map(([name, key]) => [
+        name,
+        { description: key.meaning, ...orNothing(schemaOf(key, of)) },
+      ]),
     ),
     additionalProperties: false,
   }
+}
+
+/** Any key may be blanked, which takes back what an included file or the scenario above an option wrote. */
+function orNothing(schema: Schema): Schema {
+  if (Array.isArray(schema.enum)) return { ...schema, enum: [...schema.enum, null] }
+  if (Array.isArray(schema.anyOf)) return { ...schema, anyOf: [...schema.anyOf, { type: 'null' }] }
+  const types = [schema.type].flat()
+  return types.includes('null') ? schema : { ...schema, type: [...types, 'null'] }
 }
 
 function schemaOf(key: Key, of: Of): Schema {

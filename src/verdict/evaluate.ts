@@ -3,6 +3,7 @@ import { benchAt } from '../blocks/bench.ts'
 import { keeping } from '../blocks/kept.ts'
 import { ratesOf } from '../blocks/rates.ts'
 import type { AnySubBlock, Outcome } from '../blocks/sub-block.ts'
+import { clockingShown } from '../clocking/shown.ts'
 import { PLAIN } from '../derivation/trace.ts'
 import type { OperatingPoint } from '../device/conditions.ts'
 import type { Node } from '../nodes/node.ts'
@@ -116,6 +117,7 @@ export function evaluateCase(plain: Case, option: OptionInput, node: Node, about
     notExamined: [...asking.notExamined, ...laterNotExamined(given)],
     checks,
     results: { ...resultsOf(given, asking, points, worst), ...laterResults(given) },
+    clocking: about.explain ? clockingShown(given, points.judged) : null,
   }
 }
 

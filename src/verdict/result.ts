@@ -1,3 +1,4 @@
+import type { ClockingShown } from '../clocking/shown.ts'
 import type { Step } from '../derivation/recorder.ts'
 
 /** The result contract: what `check --json` prints and what stands beside every memo. Values are in SI. */
@@ -69,6 +70,8 @@ export interface CaseResult {
   readonly notExamined: readonly NotExamined[]
   readonly checks: readonly CheckResult[]
   readonly results: Readonly<Record<string, NamedValue>>
+  /** Curves and budget lines of the clock; null without a loop, or when only verdicts were wanted. */
+  readonly clocking: ClockingShown | null
 }
 
 export type Origin = 'scenario' | 'node' | 'default'

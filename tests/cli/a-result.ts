@@ -36,6 +36,7 @@ export function aCase(option: string, node: string, check: CheckResult): CaseRes
     notExamined: [{ subBlock: 'link', title: 'Link', reason: 'the scenario states no channel' }],
     checks: [check],
     results: {},
+    clocking: null,
   }
 }
 

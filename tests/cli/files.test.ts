@@ -37,7 +37,7 @@ describe('writing', () => {
   it('makes the folder, writes text and bytes, and leaves nothing else behind', () => {
     files.writeAll([
       { file: at('deep/a.txt'), content: 'Ω ≥ √2' },
-      { file: at('deep/b.bin'), content: new Uint8Array([0, 255, 10]) },
+      { file: at('deep/b.bin'), content: [new Uint8Array([0, 255]), new Uint8Array([10])] },
     ])
     expect(readFileSync(at('deep/a.txt'), 'utf8')).toBe('Ω ≥ √2')
     expect([...readFileSync(at('deep/b.bin'))]).toEqual([0, 255, 10])

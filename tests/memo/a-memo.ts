@@ -43,7 +43,7 @@ export const resources: MemoResources = {
 /** One file of the memo, as bytes. */
 export async function bytesAs(result: Result, format: MemoFormat, more = resources): Promise<Buffer> {
   const [first] = await makeMemo(result, [format], more)
-  return Buffer.from(first!.content)
+  return Buffer.concat([...first!.content])
 }
 
 /** One file of the memo, as text. */

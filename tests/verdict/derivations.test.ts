@@ -101,7 +101,7 @@ describe.each(DEMO_NAMES)('%s', async (name) => {
   test('explaining changes no number', async () => {
     const plain = await resultOf(demoText(name), demoFile(name), false)
     const bare = (one: typeof result) =>
-      one.cases.map(({ checks: all, ...rest }) => ({
+      one.cases.map(({ checks: all, clocking: _curves, ...rest }) => ({
         ...rest,
         checks: all.map(({ steps: _, ...check }) => check),
       }))

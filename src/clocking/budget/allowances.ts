@@ -58,7 +58,15 @@ export function allowanceOf(bench: Bench, quantity: Quantity): Allowance {
   const { error_ratio } = bench.settings
   if (own !== null) {
     return {
-      limit: inTime(own, 'L', 'allowance of the scenario', 'this scenario', bench),
+      limit: inTime(
+        own,
+        {
+          meaning: 'allowance of the scenario',
+          source: 'this scenario',
+          path: `jitter_budget.${quantity}${own.unit === 'UI' ? '_ui' : ''}`,
+        },
+        bench,
+      ),
       basis: "the scenario's allowance",
       sure: true,
       counts: 'all',
@@ -76,18 +84,20 @@ export function allowanceOf(bench: Bench, quantity: Quantity): Allowance {
   }
   if (quantity === 'random' && preset.random === undefined) return { limit: fromPeak(preset, bench), ...rest }
   const limit = presetLimit(preset, quantity)!
-  return { limit: inTime(limit, 'L', `allowance of ${preset.title}`, preset.clause, bench), ...rest }
+  return {
+    limit: inTime(limit, { meaning: `allowance of ${preset.title}`, source: preset.clause }, bench),
+    ...rest,
+  }
 }
 
 function inTime(
   { value, unit }: Limit,
-  symbol: string,
-  meaning: string,
-  source: string,
+  about: { readonly meaning: string; readonly source: string; readonly path?: string },
   { t, rates }: Bench,
 ): number {
-  const noted = source === 'this scenario' ? value : t.leaf({ symbol, meaning, unit, source }, value)
-  return unit === 's' ? noted : t.calc(allowedTime, noted, rates.UI!)
+  if (unit === 's')
+    return about.path === undefined ? t.leaf({ symbol: 'J_lim', unit, ...about }, value) : value
+  return t.calc(allowedTime, t.leaf({ symbol: 'L', unit, ...about }, value), rates.UI!)
 }
 
 function fromPeak(preset: Preset, { t, rates }: Bench): number {

@@ -55,6 +55,7 @@ export interface PathMark {
   readonly fill?: string
   readonly stroke?: string
   readonly width?: number
+  readonly dash?: readonly number[]
   readonly of?: string
 }
 

@@ -50,7 +50,7 @@ function draw(pen: Pen, mark: Mark): void {
     outline(pen, mark.width, mark.dash)
     pen.moveTo(mark.x1, mark.y1).lineTo(mark.x2, mark.y2).stroke(mark.stroke)
   } else {
-    outline(pen, mark.width ?? 1)
+    outline(pen, mark.width ?? 1, mark.dash)
     pen.translate(mark.x, mark.y).path(mark.d)
     paint(pen, mark.fill, mark.stroke)
   }

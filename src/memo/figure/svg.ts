@@ -21,7 +21,7 @@ function drawn(mark: Mark): string {
     case 'text':
       return `<text x="${n(mark.x)}" y="${n(mark.y)}" font-size="${n(mark.size)}" fill="${xml(mark.fill)}"${mark.anchor === 'start' ? '' : ` text-anchor="${mark.anchor}"`}${mark.bold === true ? ' font-weight="bold"' : ''}>${xml(mark.text)}</text>`
     case 'path':
-      return `<path transform="translate(${n(mark.x)} ${n(mark.y)})" d="${xml(mark.d)}" fill="${xml(mark.fill ?? 'none')}"${line(mark.stroke, mark.width ?? 1)}/>`
+      return `<path transform="translate(${n(mark.x)} ${n(mark.y)})" d="${xml(mark.d)}" fill="${xml(mark.fill ?? 'none')}"${line(mark.stroke, mark.width ?? 1, mark.dash)}/>`
   }
 }
 

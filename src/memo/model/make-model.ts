@@ -10,6 +10,7 @@ import { assumptionCount, assumptionGroups } from './assumptions.ts'
 import { caseName } from './case-names.ts'
 import { CAUTIONS, SIGNATURES } from './cautions.ts'
 import { checkRow, type FirstShown } from './checks.ts'
+import { clockingGroups, JITTER_COLUMNS, PARTS_COLUMNS } from './clocking.ts'
 import { derivationGroups } from './derivations.ts'
 import { notExaminedRows, unknownRows } from './gaps.ts'
 import { headroomGroups } from './headroom.ts'
@@ -47,6 +48,9 @@ export function makeModel(result: Result, writeQuantity: QuantityText): MemoMode
     speed: speedBars(result),
     margins: marginStrip(result),
     headroom: headroomGroups(result, write),
+    clocking: clockingGroups(result, write),
+    clockingJitterColumns: JITTER_COLUMNS,
+    clockingPartsColumns: PARTS_COLUMNS,
     cases,
     assumptions: assumptionGroups(result, write),
     assumptionCount: assumptionCount(result),

@@ -1,6 +1,7 @@
 import type { Verdict } from '../../verdict/result.ts'
 import type { Figure } from '../figure/figure.ts'
 import type { Runs } from '../text/runs.ts'
+import type { ClockingGroup } from './clocking.ts'
 
 /** Everything a memo says, in order, as text with units: HTML, PDF and later readers only lay it out. */
 export interface MemoModel {
@@ -18,6 +19,9 @@ export interface MemoModel {
   readonly speed: readonly Figure[]
   readonly margins: Figure
   readonly headroom: readonly HeadroomGroup[]
+  readonly clocking: readonly ClockingGroup[]
+  readonly clockingJitterColumns: readonly string[]
+  readonly clockingPartsColumns: readonly string[]
   readonly cases: readonly CaseSection[]
   readonly assumptions: readonly AssumptionGroup[]
   readonly assumptionCount: string

@@ -27,6 +27,8 @@ export class SourceList {
 /** Sets every step once: the same step in another check is the same object. Lives as long as one memo is made. */
 export class StepBook {
   readonly #known = new Map<string, StepShown>()
+  /** Checks share the steps that they have in common. */
+  readonly #byStep = new Map<Step, StepShown>()
   readonly #sources: SourceList
   readonly #write: QuantityText
 
@@ -37,6 +39,12 @@ export class StepBook {
 
   /** A step as it is set. Its number within one check is not part of it. */
   shown(step: Step): StepShown {
+    const known = this.#byStep.get(step) ?? this.#alike(step)
+    this.#byStep.set(step, known)
+    return known
+  }
+
+  #alike(step: Step): StepShown {
     const { kind, symbol, meaning, formula, inputs, value, unit, source, path, yields, tolerance } = step
     const key = JSON.stringify([
       kind,

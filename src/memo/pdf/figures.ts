@@ -20,7 +20,8 @@ export function writeFigures(sheet: Sheet, { speed, margins }: MemoModel): void 
 
 const CAPTION = 16
 
-function roomFor(sheet: Sheet, figure: Figure | undefined): number {
+/** Height that a figure and its caption take [pt]; 0 without one. */
+export function roomFor(sheet: Sheet, figure: Figure | undefined): number {
   return figure === undefined ? 0 : figure.height * factorOf(sheet, figure) + CAPTION
 }
 
@@ -29,7 +30,8 @@ function factorOf({ width, pageRoom }: Sheet, figure: Figure): number {
   return Math.min(width / figure.width, (pageRoom - 80) / figure.height)
 }
 
-function drawFigure(sheet: Sheet, figure: Figure): void {
+/** Draws a figure with its caption. */
+export function drawFigure(sheet: Sheet, figure: Figure): void {
   const factor = factorOf(sheet, figure)
   const height = figure.height * factor
   sheet.ensure(height + CAPTION)

@@ -2,6 +2,7 @@ import { joinedBytes } from '../bytes.ts'
 import type { MemoModel } from '../model/memo-model.ts'
 import { writeAssumptions } from './assumptions.ts'
 import { writeChecks } from './checks.ts'
+import { writeClocking } from './clocking.ts'
 import { writeAppendix, writeCautions } from './closing.ts'
 import { writeDerivations } from './derivations.ts'
 import { writeFigures } from './figures.ts'
@@ -86,6 +87,7 @@ function writeMemo(sheet: Sheet, model: MemoModel): void {
     writeGaps,
     writeFigures,
     writeHeadroom,
+    writeClocking,
     writeCautions,
     writeChecks,
     writeAssumptions,
