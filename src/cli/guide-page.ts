@@ -9,6 +9,7 @@ export const CHAPTERS: readonly { readonly id: string; readonly title: string }[
   { id: 'node-files', title: 'Node files' },
   { id: 'error-codes', title: 'Error codes' },
   { id: 'method-notes', title: 'Method notes' },
+  { id: 'clocking', title: 'Clock, phase noise and jitter' },
   { id: 'hand-calculations', title: 'Hand calculations' },
 ]
 

@@ -1,3 +1,4 @@
+import { type Limit, PRESET_TABLE, type Preset } from '../clocking/budget/presets.ts'
 import { exchangeStudy } from '../explore/exchange.ts'
 import { stackedStageSpeed } from '../explore/stacked-stage.ts'
 import { nodeKeys } from '../nodes/keys.ts'
@@ -19,6 +20,8 @@ export interface GuideTables {
   readonly faultCodes: readonly { readonly code: string; readonly meaning: string }[]
   readonly nodeClasses: readonly Readonly<Record<string, string | number>>[]
   readonly subBlocks: readonly Readonly<Record<string, string>>[]
+  /** Jitter allowances of open interface standards. */
+  readonly presets: readonly Readonly<Record<string, string>>[]
   /** How much of the order of two classes rests on which value. */
   readonly exchange: ReturnType<typeof exchangeTable>
 }
@@ -54,7 +57,34 @@ export function guideTables(io: Io): GuideTables {
       of: of.join(', '),
       checks: checks.map((check) => check.title).join('; '),
     })),
+    presets: Object.entries(PRESET_TABLE).map(([id, preset]) => presetRow(id, preset)),
     exchange: exchangeTable(io, 'F16', 'F5'),
+  }
+}
+
+/** A preset in words. */
+function presetRow(id: string, preset: Preset): Readonly<Record<string, string>> {
+  const { random, randomPeak, bounded, total, even_odd, rms, tail, error_ratio, tracking } = preset
+  const named: readonly (readonly [string, Limit | undefined])[] = [
+    ['random', random],
+    [`random peak to peak at ${error_ratio}`, randomPeak],
+    ['bounded', bounded],
+    [`total at ${error_ratio}`, total],
+    ['even-odd', even_odd],
+    ['J_rms', rms],
+    [`J_${tail?.n ?? ''}u`, tail],
+  ]
+  return {
+    id,
+    title: preset.title,
+    clause: preset.clause,
+    evidence: preset.evidence,
+    tracking: tracking === null ? 'f_B/1667' : shownValue(tracking, 'Hz'),
+    allowances: named
+      .flatMap(([name, limit]) =>
+        limit === undefined ? [] : [`${name} ${shownValue(limit.value, limit.unit)}`],
+      )
+      .join(', '),
   }
 }
 

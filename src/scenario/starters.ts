@@ -19,7 +19,9 @@ transmitter: {swing: 0.6 V}                         # invented
 receiver: {dfe_taps: 1, dfe: unrolled}
 pads: {cdm_current: 3 A, extension: T-coil}         # your protection requirement (invented)
 # An uncertain value: {low: 18 dB, typical: 22 dB, high: 26 dB} or {mean: 22 dB, sigma: 2 dB}
-# Ask for more by writing it: channel, loop, jitter_budget, power_budget, fec.
+loop: {reference: 156.25 MHz}                       # closed around the oscillator; bandwidth of least jitter (invented)
+jitter_budget: {random: 250 fs, total: 0.30 UI}     # or preset: ieee-802.3cd-kr, see the guide (invented)
+# Ask for more by writing it: channel, power_budget, fec.
 
 nodes: [P65, P28, F16, F7]    # tapeworthy nodes lists them; a path names a node file of your own
 options:                      # each overrides the keys above
@@ -37,7 +39,9 @@ revision: A
 block: clock                  # clock: a clock generator; link: one lane
 oscillator: {kind: LC, range: [7.5 GHz, 8.5 GHz]}  # LC | ring | CMOS-ring (invented)
 clock: {style: CML}           # CML | CMOS distribution
-# Ask for more by writing it: loop, jitter_budget, power_budget.
+loop: {reference: 100 MHz, lock_time: 50 µs}       # bandwidth: the best one unless you write it (invented)
+jitter_budget: {random: 300 fs}                    # allowed rms (invented)
+power_budget: 30 mW                                # invented
 
 nodes: [P65, P28, F16]        # tapeworthy nodes lists them; a path names a node file of your own
 options:                      # each overrides the keys above
