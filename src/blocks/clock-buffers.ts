@@ -59,7 +59,13 @@ function prepare(bench: Bench): Stacked | Unprepared {
       beta,
     )
   }
-  const rule = { key: 'clock_buffers', f_op: rates.f_ck, k: settings.demand.multiples.clock_buffers, beta }
+  const rule = {
+    key: 'clock_buffers',
+    f_op: rates.f_ck,
+    of: 'f_ck',
+    k: settings.demand.multiples.clock_buffers,
+    beta,
+  }
   return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high }
 }
 

@@ -84,7 +84,7 @@ export function currentModeDriver(bench: Bench, stack: Exclude<StackSupply, { mi
     const c_lay = trace.calc(layoutShare, device.of.C_lay, C_gg)
     return trace.calc(poleDemand, BW, A, trace.calc(loadFactor, phi, A, m, c_lay, d, w), beta)
   }
-  const rule = { key: 'driver', f_op: rates.f_N!, k: settings.demand.multiples.driver, beta }
+  const rule = { key: 'driver', f_op: rates.f_N!, of: 'f_N', k: settings.demand.multiples.driver, beta }
   return {
     speed: stageSpeed({ stage, V, rule, demand }, t),
     V_S: V_tail,

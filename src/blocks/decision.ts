@@ -80,6 +80,10 @@ export function decisionRate({ settings, rates, t }: Bench): number {
   return kind === 'converter' ? t.calc(subConverterRate, rates.f_B!, converter.sub_converters) : rates.f_ck
 }
 
+/** Symbol of {@link decisionRate}. */
+export const decisionSymbol = ({ settings }: Bench): string =>
+  settings.receiver.kind === 'converter' ? 'f_d' : 'f_ck'
+
 /** T_d = 1/f_d. f_d [Hz] → [s]. */
 export const decisionPeriod = formula(
   { symbol: 'T_d', meaning: 'clock period of the decision', unit: 's', source: 'definition' },

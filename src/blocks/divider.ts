@@ -28,7 +28,7 @@ function prepare(bench: Bench): Divider | Unprepared {
   const k_latch = latchFactorOf(t)
   const demand = (J: number, trace: Trace): number =>
     trace.calc(latchDemand, f_osc, latchLoadAt(device, node.shares, A, fan_out, J, trace), k_latch, beta)
-  const rule = { key: 'divider', f_op: f_osc, k: settings.demand.multiples.divider, beta }
+  const rule = { key: 'divider', f_op: f_osc, of: 'f_max', k: settings.demand.multiples.divider, beta }
   return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, V_off, device, V_sw }
 }
 

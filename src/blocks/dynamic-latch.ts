@@ -4,7 +4,14 @@ import type { Trace } from '../derivation/trace.ts'
 import { type FixedBias, fixedBiasAt, givenGateVoltage, laidOutAt } from '../device/fixed-bias.ts'
 import { effectiveSpeed } from '../device/speed.ts'
 import type { Bench } from './bench.ts'
-import { constant, growthOf, INTEGRATION, REGENERATION, regenerationTime } from './decision.ts'
+import {
+  constant,
+  decisionSymbol,
+  growthOf,
+  INTEGRATION,
+  REGENERATION,
+  regenerationTime,
+} from './decision.ts'
 import { combineRoutes, type Rule, ruleRoute } from './stage-speed.ts'
 import type { Outcome } from './sub-block.ts'
 
@@ -111,7 +118,13 @@ export function dynamicLatch(bench: Bench, f_d: number): DynamicLatch {
     f_T,
     tau: t.calc(regenerationTime, constant(REGENERATION, t), f_T),
     f_d,
-    rule: { key: 'sampler', f_op: f_d, k: settings.demand.multiples.sampler, beta: t.leaf(NO_PEAKING, 1) },
+    rule: {
+      key: 'sampler',
+      f_op: f_d,
+      of: decisionSymbol(bench),
+      k: settings.demand.multiples.sampler,
+      beta: t.leaf(NO_PEAKING, 1),
+    },
   }
 }
 

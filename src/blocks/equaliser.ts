@@ -76,7 +76,7 @@ function pairChain(
     const load = trace.calc(loadFactor, receiver.fan_out, A, m, c_lay, d, w)
     return trace.calc(chainDemand, BW, A, load, beta, shrink)
   }
-  const rule = { key: 'equaliser', f_op: f_N, k: settings.demand.multiples.equaliser, beta }
+  const rule = { key: 'equaliser', f_op: f_N, of: 'f_N', k: settings.demand.multiples.equaliser, beta }
   return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, chain, device }
 }
 

@@ -45,7 +45,7 @@ function ruleOf({ settings, rates, t }: Bench): Rule {
   const { sampler, dfe } = settings.receiver
   const slow = sampler === 'dynamic-latch' && dfe === 'direct'
   const beta = peakingFactor(settings.peaking.receive, t)
-  return { key: 'first_tap', f_op: rates.f_B!, k: slow ? first_tap_dynamic : first_tap, beta }
+  return { key: 'first_tap', f_op: rates.f_B!, of: 'f_B', k: slow ? first_tap_dynamic : first_tap, beta }
 }
 
 function currentModeLoop(

@@ -4,6 +4,7 @@ import type { DeviceHere } from '../device/conditions.ts'
 import { speedAt, transconductanceAt } from '../device/speed.ts'
 import { halfDensity } from '../device/stacks/lines.ts'
 import type { Bench, StackSupply } from './bench.ts'
+import { decisionSymbol } from './decision.ts'
 import { notedDesignDensity } from './design-point.ts'
 import {
   CROSS_RATIO,
@@ -63,7 +64,13 @@ export function flipFlop(
   const phi_o = t.leaf(ONE_LATCH, 1)
   const demand = (J: number, trace: Trace): number =>
     trace.calc(latchDemand, f_in, latchLoadAt(device, node.shares, A, phi_o, J, trace), k_latch, beta)
-  const rule = { key: 'sampler', f_op: f_d, k: settings.demand.multiples.sampler, beta }
+  const rule = {
+    key: 'sampler',
+    f_op: f_d,
+    of: decisionSymbol(bench),
+    k: settings.demand.multiples.sampler,
+    beta,
+  }
   return {
     speed: stageSpeed({ stage, V, rule, demand }, t),
     V_S: V_tail,

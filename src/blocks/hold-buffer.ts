@@ -67,6 +67,6 @@ export function holdBuffer(
     return trace.calc(followerDemand, f_N, trace.calc(followerFanOut, C_rank, C_s, m, c_lay, A_f, chi), d, w)
   }
   const k = settings.demand.multiples.track_and_hold
-  const rule = { key: 'track_and_hold', f_op: f_N, k, beta: t.leaf(NO_PEAKING, 1) }
+  const rule = { key: 'track_and_hold', f_op: f_N, of: 'f_N', k, beta: t.leaf(NO_PEAKING, 1) }
   return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high }
 }

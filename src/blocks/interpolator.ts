@@ -45,7 +45,13 @@ function prepare(bench: Bench): Stacked | Unprepared {
     const load = trace.calc(legsLoad, fan_out, A, m, c_lay, n_leg, d, w)
     return trace.calc(interpolatorDemand, rates.f_ck, A, load, beta)
   }
-  const rule = { key: 'interpolator', f_op: rates.f_ck, k: settings.demand.multiples.interpolator, beta }
+  const rule = {
+    key: 'interpolator',
+    f_op: rates.f_ck,
+    of: 'f_ck',
+    k: settings.demand.multiples.interpolator,
+    beta,
+  }
   return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, V_off }
 }
 

@@ -73,7 +73,13 @@ export function inverterChain(bench: Bench): InverterChain | Unprepared {
     chain,
     here: inverterAt(nmos, pmos, t.calc(halfSupply, V), t),
     BW: t.calc(dataBandwidth, settings.receiver.bandwidth_factor, f_N),
-    rule: { key: 'equaliser', f_op: f_N, k: settings.demand.multiples.equaliser, beta: chain.beta },
+    rule: {
+      key: 'equaliser',
+      f_op: f_N,
+      of: 'f_N',
+      k: settings.demand.multiples.equaliser,
+      beta: chain.beta,
+    },
     V,
     V_high,
   }

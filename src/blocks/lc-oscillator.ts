@@ -38,7 +38,7 @@ export function lcOscillatorAt(bench: Bench): LcOscillator | Unprepared {
   const demand = demandOf(tank, bench)
   const f_T = demand.room === null ? Number.POSITIVE_INFINITY : demand.room.f_T
   const k = settings.demand.multiples.lc_oscillator
-  const rule = { key: 'lc_oscillator', f_op: tank.f_max, k, beta: t.leaf(NO_PEAKING, 1) }
+  const rule = { key: 'lc_oscillator', f_op: tank.f_max, of: 'f_max', k, beta: t.leaf(NO_PEAKING, 1) }
   const speed = stageSpeed({ stage: lcPair({ nmos, pmos, V_tail }), V, rule, demand: () => f_T }, t)
   return { speed, V_S: V_tail, V_high, tank, demand, nmos, pmos }
 }

@@ -59,7 +59,7 @@ function prepare(bench: Bench): Stacked | Unprepared {
     return trace.calc(poleDemand, BW, A, trace.calc(legsLoad, phi, A, m, c_lay, n_leg, d, w), beta)
   }
   const k = t.calc(multiplexerMultiple, multiplexer === '2:1' ? multiplexer_2 : multiplexer_4, phi)
-  const rule = { key: 'multiplexer', f_op: rates.f_B!, k, beta }
+  const rule = { key: 'multiplexer', f_op: rates.f_B!, of: 'f_B', k, beta }
   return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, V_off }
 }
 

@@ -59,6 +59,7 @@ export function rangeCheck(title: string): CheckSpec<object> {
     quantity: 'range holds the clock',
     unit: '1',
     sense: 'at least',
+    yesNo: true,
     asked: ({ block }) => block === 'link',
     evaluate: coverOutcome,
   }

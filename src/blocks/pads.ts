@@ -11,11 +11,13 @@ import {
   worstReturnLoss,
 } from './pad-network.ts'
 import { seriesDriver } from './source-series-driver.ts'
+import { derivedRoute } from './stage-speed.ts'
 import {
   type AnySubBlock,
   ASKED,
   type NamedResult,
   type Outcome,
+  type RouteOutcome,
   subBlock,
   type Unprepared,
 } from './sub-block.ts'
@@ -29,9 +31,15 @@ interface Pad {
   readonly basis: string
 }
 
+/** A pad whose driver has no operating point is judged by how much supply the driver lacks. */
+interface NoDriver {
+  readonly short: RouteOutcome & { readonly margin: number }
+  readonly binding: string
+}
+
 const BUMP = { 'flip-chip': 'flip_chip', 'micro-bump': 'micro_bump', 'wire-bond': 'wire_bond' } as const
 
-function prepare(end: End, bench: Bench): Pad | Unprepared {
+function prepare(end: End, bench: Bench): Pad | NoDriver | Unprepared {
   const { settings, node, t } = bench
   const { cdm_current, bump, extension, transmit_capacitance, receive_capacitance } = settings.pads
   const x_ext = extensionFactor(extension, t)
@@ -42,7 +50,7 @@ function prepare(end: End, bench: Bench): Pad | Unprepared {
     end === 'transmit'
       ? driverDrain(bench)
       : { C: t.calc(receiverShare, C_fix), basis: 'input devices a tenth of protection and bump' }
-  if ('unknown' in device) return device
+  if ('unknown' in device || 'short' in device) return device
   return {
     C_pad: t.calc(padCapacitance, C_fix, device.C),
     x_ext,
@@ -56,18 +64,24 @@ interface Drain {
 }
 
 /** What the driver hangs on its pad [F]. */
-function driverDrain(bench: Bench): Drain | Unprepared {
+function driverDrain(bench: Bench): Drain | NoDriver | Unprepared {
   const { stack, settings } = bench
   if (settings.transmitter.kind === 'source-series') {
     return { C: seriesDriver(bench).C_drain, basis: 'slices of the driver' }
   }
   if (stack.missing !== undefined) return { unknown: stack.missing }
-  const { C_drain, operates } = driverSize(currentModeDriver(bench, stack).speed, stack, bench)
-  const basis = operates
-    ? 'driver at its capability'
-    : 'driver without operating point, sized at the largest admissible current per width'
-  return { C: C_drain, basis }
+  const { speed } = currentModeDriver(bench, stack)
+  if (speed.capability.J === null) {
+    return { short: derivedRoute(speed, bench.t), binding: speed.capability.binding }
+  }
+  return { C: driverSize(speed, stack, bench).C_drain, basis: 'driver at its capability' }
 }
+
+/** Outcome of a pad, or that of the driver it waits for. */
+const judged =
+  (evaluate: (pad: Pad, bench: Bench) => Outcome) =>
+  (state: Pad | NoDriver, bench: Bench): Outcome =>
+    'short' in state ? { ...state.short, basis: `output driver: ${state.binding}` } : evaluate(state, bench)
 
 function bandwidthOutcome({ C_pad, x_ext, basis }: Pad, { settings, rates, t }: Bench): Outcome {
   const required = rates.f_N!
@@ -91,11 +105,12 @@ function returnLossOutcome({ C_pad, x_ext, basis }: Pad, { settings, t }: Bench)
   }
 }
 
-function results(
-  end: End,
-  { C_pad, x_ext, basis }: Pad,
-  { settings, rates, t }: Bench,
-): readonly NamedResult[] {
+function results(end: End, state: Pad | NoDriver, { settings, rates, t }: Bench): readonly NamedResult[] {
+  if ('short' in state) {
+    const reason = 'the output driver has no operating point'
+    return [{ name: `pad.${end}.bandwidth_Hz`, value: null, unit: 'Hz', reason }]
+  }
+  const { C_pad, x_ext, basis } = state
   const { termination: R0, termination_tolerance } = settings.transmitter
   const at = settings.pads.return_loss?.at ?? rates.f_N!
   const named = (name: string, value: number, unit: string, reason?: string): NamedResult => ({
@@ -123,7 +138,7 @@ function results(
 }
 
 function pad(end: End, title: string): AnySubBlock {
-  return subBlock<Pad>({
+  return subBlock<Pad | NoDriver>({
     id: `${end}_pad`,
     title,
     of: ['link'],
@@ -136,7 +151,7 @@ function pad(end: End, title: string): AnySubBlock {
         quantity: 'bandwidth of the terminated pad',
         unit: 'Hz',
         sense: 'at least',
-        evaluate: bandwidthOutcome,
+        evaluate: judged(bandwidthOutcome),
       },
       {
         name: 'return_loss',
@@ -145,7 +160,7 @@ function pad(end: End, title: string): AnySubBlock {
         unit: 'dB',
         sense: 'at least',
         asked: ({ settings }) => settings.pads.return_loss !== null,
-        evaluate: returnLossOutcome,
+        evaluate: judged(returnLossOutcome),
       },
     ],
     results: (state, bench) => results(end, state, bench),

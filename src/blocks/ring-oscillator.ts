@@ -85,6 +85,7 @@ function currentModeRing(
   const rule = {
     key: 'ring_oscillator',
     f_op: f_max,
+    of: 'f_max',
     k: settings.demand.multiples.ring_oscillator,
     beta: t.leaf(NO_PEAKING, 1),
   }

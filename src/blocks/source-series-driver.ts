@@ -127,7 +127,10 @@ export function slicesOutcome({ R_slice, C_gate }: SeriesDriver, bench: Bench): 
   const available = t.calc(sliceSpeed, R_slice, C_gate)
   const derived = { required, available, margin: t.calc(marginAtLeast, available, required) }
   const beta = peakingFactor(settings.peaking.transmit, t)
-  const rule = ruleRoute({ key: 'driver', f_op: f_N, k: settings.demand.multiples.driver, beta }, bench)
+  const rule = ruleRoute(
+    { key: 'driver', f_op: f_N, of: 'f_N', k: settings.demand.multiples.driver, beta },
+    bench,
+  )
   return { ...combineRoutes(rule, derived, bench, 'the gates of slices of 0.3 R0'), supply: V_core }
 }
 

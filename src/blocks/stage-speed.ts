@@ -22,6 +22,8 @@ export interface Rule {
   /** Key under `demand.multiples` and `demand.formulas`. */
   readonly key: string
   readonly f_op: number
+  /** Symbol of the operating frequency. */
+  readonly of: string
   readonly k: number
   readonly beta: number
 }
@@ -64,6 +66,7 @@ export function stageSpeed(given: Omit<StageSpeed, 'capability'>, t: Trace): Sta
 export function ruleRoute(rule: Rule, bench: Bench): RouteOutcome {
   const { t } = bench
   const own = bench.rules[rule.key]
+  t.alias('f_op', rule.of)
   const required =
     own === undefined ? t.calc(ruleDemand, rule.k, rule.f_op, rule.beta) : userDemand(own, rule, bench)
   const available = bench.peak

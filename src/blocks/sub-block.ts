@@ -32,6 +32,8 @@ export interface CheckSpec<State> {
   readonly quantity: string
   readonly unit: string
   readonly sense: 'at least' | 'at most'
+  /** A yes or no: its margin is 1 + guard or 0 and ranks nothing. */
+  readonly yesNo?: true
   /** Absent: always asked. */
   readonly asked?: (given: Case) => boolean
   readonly evaluate: (state: State, bench: Bench) => Outcome

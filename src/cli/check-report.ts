@@ -30,7 +30,10 @@ export function pointText({ operatingPoint: at }: CheckResult): string {
 }
 
 /** `transit frequency needs 140 GHz, has 116 GHz`, or `allows …, is …` where less is better. */
-export function comparison({ required, available, unit, sense, quantity }: CheckResult): string {
+export function comparison(check: CheckResult): string {
+  const { required, available, unit, sense, quantity } = check
+  if (check.yesNo === true)
+    return `${quantity}: ${check.verdict === 'fail' ? 'no' : 'yes'}${check.reason === undefined ? '' : `, ${check.reason}`}`
   const [needs, has] = sense === 'at least' ? ['needs', 'has'] : ['may be', 'is']
   return `${quantity} ${needs} ${shownValue(required, unit)}, ${has} ${shownValue(available, unit)}`
 }

@@ -26,6 +26,8 @@ export interface Step {
 /** A given number that a formula may use without being told: the node's and the scenario's own values. */
 export interface KnownLeaf extends Given {
   readonly value: number
+  /** Where its value is used; absent when anywhere. */
+  readonly usedBy?: readonly string[]
 }
 
 /** Given numbers by value, so that a recorder finds the origin of an input at once. Made once, used by many. */
@@ -43,11 +45,16 @@ export class KnownLeaves {
     }
   }
 
-  /** The leaf of this symbol and value. */
-  named(symbol: string, value: number): KnownLeaf | undefined {
-    return (
-      this.#byValue.get(value)?.find((leaf) => leaf.symbol === symbol) ?? this.#below?.named(symbol, value)
+  /** The leaf of this symbol and value; of several, one that is used for the purpose, else one used anywhere. */
+  named(symbol: string, value: number, purpose: string): KnownLeaf | undefined {
+    const own = this.#byValue.get(value)?.filter((leaf) => leaf.symbol === symbol) ?? []
+    const fits = (leaf: KnownLeaf): number =>
+      leaf.usedBy === undefined ? 1 : leaf.usedBy.includes(purpose) ? 2 : 0
+    const best = own.reduce<KnownLeaf | undefined>(
+      (most, leaf) => (most === undefined || fits(leaf) > fits(most) ? leaf : most),
+      undefined,
     )
+    return best ?? this.#below?.named(symbol, value, purpose)
   }
 
   /** Any leaf of this value. */
@@ -74,8 +81,22 @@ export class Recorder implements Trace {
   /** Steps that show a search was solved, by the place of its root. */
   readonly #shown = new Map<number, number[]>()
 
-  constructor(known: KnownLeaves) {
+  readonly #purpose: string
+  /** Names of parameters that stand for a symbol of another name. */
+  readonly #aliases = new Map<string, string>()
+
+  /**
+   * @param known given numbers
+   * @param purpose id of the sub-block whose checks are written down: of given numbers that share symbol and value,
+   * those are meant that it uses
+   */
+  constructor(known: KnownLeaves, purpose = '') {
     this.#known = known
+    this.#purpose = purpose
+  }
+
+  alias(parameter: string, symbol: string): void {
+    this.#aliases.set(parameter, symbol)
   }
 
   calc<A extends number[]>(formula: Formula<A>, ...args: A): number {
@@ -126,11 +147,12 @@ export class Recorder implements Trace {
   }
 
   /** Where the step with this value stands; prefers one of the same symbol, then the latest. */
-  #find(name: string, value: number): number {
+  #find(parameter: string, value: number): number {
+    const name = this.#aliases.get(parameter) ?? parameter
     const places = this.#places.get(value) ?? []
     const ofSymbol = places.findLast((k) => this.#drafts[k]!.symbol === name)
     if (ofSymbol !== undefined) return ofSymbol
-    const named = this.#known.named(name, value)
+    const named = this.#known.named(name, value, this.#purpose)
     if (named !== undefined) return this.#adopt(named)
     const latest = places.at(-1)
     if (latest !== undefined) return latest

@@ -53,6 +53,8 @@ export interface Trace {
   kernel(about: Procedure, value: number, inputs?: Readonly<Record<string, number>>): number
   /** Keeps the derivation of a value that shows a search was solved, wherever the root `of` that search is used. */
   show(value: number, of: number): void
+  /** Says that a parameter of coming formulas stands for a symbol of another name. */
+  alias(parameter: string, symbol: string): void
   /** True when steps are being written down: lets callers build `inputs` only then. */
   readonly recording: boolean
 }
@@ -90,6 +92,7 @@ class PlainTrace implements Trace {
     return value
   }
   show(): void {}
+  alias(): void {}
 }
 
 /** The trace of the hot path. It holds no state, so one serves everybody. */

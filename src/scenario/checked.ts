@@ -22,6 +22,8 @@ export interface Provenance {
   /** `published`, `derived`, `common practice`, `estimate`, `invented`, `given`. */
   readonly evidence: string
   readonly origin: 'scenario' | 'node' | 'default'
+  /** Ids of the sub-blocks or topics whose checks use the value; absent when any may. */
+  readonly usedBy?: readonly string[]
   /** Present when the file stated a spread. */
   readonly spread?: Spread
 }

@@ -15,6 +15,7 @@ export const FAULT_CODES = {
   'shape.list': 'A list is due here.',
   'shape.text': 'A text is due here.',
   'key.unknown': 'The key is not known in this place.',
+  'key.other-block': 'The key belongs to the other kind of block.',
   'key.missing': 'A key that is needed is not there.',
   'unit.missing': 'A bare number stands where a unit is due.',
   'unit.unknown': 'The unit is not known.',

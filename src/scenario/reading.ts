@@ -107,6 +107,7 @@ function readKey(key: Key, tree: Tree | null, path: string, near: Place | null, 
     source: `${tree.place.file}, line ${tree.place.line}`,
     evidence: 'given',
     origin: reading.of,
+    ...(key.usedBy === undefined ? {} : { usedBy: key.usedBy }),
     ...read.note,
   })
   return read.value
@@ -181,6 +182,7 @@ function absent(key: LeafKey, path: string, near: Place | null, reading: Reading
     source,
     evidence: evidenceOf(source),
     origin: 'default',
+    ...(key.usedBy === undefined ? {} : { usedBy: key.usedBy }),
   })
   return value
 }

@@ -118,6 +118,32 @@ const loopHasOscillator: Rule = ({ loop }, block, { has, placeOf }) =>
         ),
       ]
 
+const OF_LINKS = [
+  'data_rate',
+  'modulation',
+  'clocking',
+  'transmitter',
+  'receiver',
+  'pads',
+  'channel',
+  'noise',
+  'fec',
+] as const
+
+/** Keys that say nothing about a clock would be ignored: better said than silently so. */
+const clockHasNoLane: Rule = (_settings, block, { has, placeOf }) =>
+  block !== 'clock'
+    ? []
+    : OF_LINKS.filter(has).map((key) =>
+        faultAt(
+          placeOf(key),
+          'key.other-block',
+          `\`${key}\` in a clock block`,
+          'keys of the clock: oscillator, divider, clock, loop, jitter_budget, power_budget and what all blocks have',
+          'remove it, or write `block: link`',
+        ),
+      )
+
 /** Least ratio of the ends of a band of integration. */
 const NARROWEST = 2
 
@@ -175,6 +201,7 @@ const RULES: readonly Rule[] = [
   jitterIsComplete,
   presetFitsBlock,
   clockHasNoInterval,
+  clockHasNoLane,
   loopHasOscillator,
   bandHoldsEnough,
   profilesCoverBand,

@@ -23,19 +23,18 @@ export function answerOf(
 }
 
 function headline(cases: readonly CaseResult[], options: readonly { readonly id: string }[]): string {
-  const count = (verdict: Verdict): number => cases.filter((one) => computedVerdict(one) === verdict).length
+  const count = (verdict: Verdict): number => cases.filter((one) => one.verdict === verdict).length
   const parts = [
     [count('pass'), 'pass', 'passes'],
     [count('tight'), 'are tight', 'is tight'],
     [count('fail'), 'fail', 'fails'],
-    [count('unknown'), 'have no computed check', 'has no computed check'],
+    [count('unknown'), 'are undecided', 'is undecided'],
   ] as const
   const said = parts
     .filter(([many]) => many > 0)
     .map(([many, what, one]) => `${many} ${many === 1 ? one : what}`)
   const what = options.length === 1 ? 'nodes' : 'combinations of option and node'
-  const open = cases.some(({ verdict }) => verdict === 'unknown') ? 'As far as computed, of' : 'Of'
-  return `${open} ${cases.length} ${what}, ${listed(said)}:`
+  return `Of ${cases.length} ${what}, ${listed(said)}:`
 }
 
 /** Verdict of what could be computed: what a case would be without its unknown checks. */
@@ -43,27 +42,37 @@ function computedVerdict(one: CaseResult): Verdict {
   return caseVerdict(one.checks.filter(({ verdict }) => verdict !== 'unknown'))
 }
 
-/** Where one option works, or what stops it where it comes closest. */
+/** Where one option works or is undecided, or what stops it where it comes closest. */
 function optionPart(
   option: { readonly id: string },
   cases: readonly CaseResult[],
   nodes: readonly { readonly id: string }[],
 ): string {
   const own = nodes.flatMap(({ id }) => cases.filter((one) => one.option === option.id && one.node === id))
-  const inNodes = (verdict: Verdict): readonly string[] =>
-    own.filter((one) => computedVerdict(one) === verdict).map(({ node }) => node)
-  const [passes, tight] = [inNodes('pass'), inNodes('tight')]
-  if (passes.length > 0) {
-    return `${option.id} passes in ${listed(passes)}${tight.length > 0 ? ` and is tight in ${listed(tight)}` : ''}`
-  }
-  if (tight.length > 0) return `${option.id} is tight in ${listed(tight)}`
+  const inNodes = (verdict: Verdict, computed: Verdict = verdict): readonly string[] =>
+    own.filter((one) => one.verdict === verdict && computedVerdict(one) === computed).map(({ node }) => node)
+  const parts = [
+    ['passes in', inNodes('pass'), ''],
+    ['is tight in', inNodes('tight'), ''],
+    ['is undecided in', inNodes('unknown', 'pass'), ', passing as far as computed'],
+    ['is undecided in', inNodes('unknown', 'tight'), ', tight as far as computed'],
+    ['is undecided in', inNodes('unknown', 'unknown'), ', with nothing computed'],
+  ] as const
+  const said = parts.flatMap(([how, where, rest]) =>
+    where.length === 0 ? [] : [`${how} ${listed(where)}${rest}`],
+  )
+  return said.length > 0 ? `${option.id} ${listed(said)}` : `${option.id} ${closest(own)}`
+}
+
+/** What stops an option that works nowhere, where it comes closest. */
+function closest(own: readonly CaseResult[]): string {
   const known = own.filter((one) => one.margin !== null)
-  if (known.length === 0) return `${option.id} has no computed check`
+  if (known.length === 0) return 'has no computed check'
   const best = known.reduce((a, b) => (b.margin! > a.margin! ? b : a))
   const limit = best.checks.find(({ id }) => id === best.limitedBy)
   const where =
     own.length === 1 ? `fails in ${best.node}` : `fails in every node, and comes closest in ${best.node}`
-  return `${option.id} ${where}, limited by ${limit?.title ?? 'an unknown check'} (margin ${best.margin!.toFixed(2)})`
+  return `${where}, limited by ${limit?.title ?? 'an unknown check'} (margin ${best.margin!.toFixed(2)})`
 }
 
 function unknownSentence(cases: readonly CaseResult[]): string {
@@ -72,9 +81,7 @@ function unknownSentence(cases: readonly CaseResult[]): string {
       checks.filter(({ verdict }) => verdict === 'unknown').map(({ title }) => title),
     ),
   )
-  return asked.size === 0
-    ? ''
-    : `Asked but unknown, so that these cases are not decided: ${listed([...asked])}.`
+  return asked.size === 0 ? '' : `Asked but unknown: ${listed([...asked])}.`
 }
 
 /** "a", "a and b", "a, b and c". */

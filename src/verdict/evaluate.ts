@@ -85,7 +85,7 @@ export function evaluateCase(plain: Case, option: OptionInput, node: Node, about
     const spec = asking.blocks[block]!.block
     const { at, outcome } = worst[k]!
     const steps = explain === null ? [] : explain(spec, check, at)
-    const { title, quantity, unit, sense, name } = spec.checks[check]!
+    const { title, quantity, unit, sense, name, yesNo } = spec.checks[check]!
     const result: CheckResult = {
       id: `${spec.id}.${name}`,
       subBlock: spec.id,
@@ -103,6 +103,7 @@ export function evaluateCase(plain: Case, option: OptionInput, node: Node, about
       ...(outcome.rule === undefined ? {} : { rule: outcome.rule }),
       ...(outcome.derived === undefined ? {} : { derived: outcome.derived }),
       ...reasonOf(outcome),
+      ...(yesNo === undefined ? {} : { yesNo }),
       steps,
     }
     return capped(result, ends[k] ?? [])

@@ -21,7 +21,7 @@ export function explaining(given: Case, leaves: KnownLeaves): Explaining {
   return (block, check, at) => {
     const ofBlock = begun.get(block) ?? new Map<OperatingPoint, Recorded>()
     begun.set(block, ofBlock)
-    const { bench, recorder } = ofBlock.get(at) ?? recordedAt(given, at, leaves)
+    const { bench, recorder } = ofBlock.get(at) ?? recordedAt(given, at, leaves, block.id)
     ofBlock.set(at, { bench, recorder })
     const [outcome] = block.outcomes(bench, [check])
     if (outcome === undefined) return []
@@ -34,7 +34,7 @@ interface Recorded {
   readonly recorder: Recorder
 }
 
-function recordedAt(given: Case, at: OperatingPoint, leaves: KnownLeaves): Recorded {
-  const recorder = new Recorder(knownLeaves(leaves, at))
+function recordedAt(given: Case, at: OperatingPoint, leaves: KnownLeaves, purpose: string): Recorded {
+  const recorder = new Recorder(knownLeaves(leaves, at), purpose)
   return { bench: benchAt(given, at, recorder), recorder }
 }

@@ -14,14 +14,15 @@ export function knownLeaves(given: KnownLeaves, at: OperatingPoint): KnownLeaves
 }
 
 function leavesOf(given: Provenance): readonly KnownLeaf[] {
-  const { path, meaning, unit, source, value } = given
+  const { path, meaning, unit, source, value, usedBy } = given
+  const used = usedBy === undefined ? {} : { usedBy }
   const symbol = given.symbol === '' ? (path.split('.').at(-1) ?? path) : given.symbol
-  if (typeof value === 'number') return [{ symbol, meaning, unit, source, path, value }]
+  if (typeof value === 'number') return [{ symbol, meaning, unit, source, path, value, ...used }]
   if (!Array.isArray(value) || value.length !== 2 || typeof value[0] !== 'number') return []
   const [least, most] = value as [number, number]
   return [
-    { symbol: `${symbol}_min`, meaning: `${meaning} (low end)`, unit, source, path, value: least },
-    { symbol: `${symbol}_max`, meaning: `${meaning} (high end)`, unit, source, path, value: most },
+    { symbol: `${symbol}_min`, meaning: `${meaning} (low end)`, unit, source, path, value: least, ...used },
+    { symbol: `${symbol}_max`, meaning: `${meaning} (high end)`, unit, source, path, value: most, ...used },
   ]
 }
 
@@ -40,6 +41,10 @@ function pointLeaves(at: OperatingPoint): readonly KnownLeaf[] {
     source,
     value,
   })
+  const datum = (...about: Parameters<typeof leaf>): KnownLeaf => ({
+    ...leaf(...about),
+    source: 'definition: the typical device of published data',
+  })
   return [
     leaf('T', 'junction temperature', 'K', at.T),
     leaf('c_mu', 'mobility factor of the corner', '1', at.c_mu),
@@ -47,9 +52,9 @@ function pointLeaves(at: OperatingPoint): readonly KnownLeaf[] {
     leaf('dV_age', 'threshold shift by ageing', 'V', at.dV_age),
     leaf('tol_V', 'supply tolerance taken', '1', at.tol_V),
     // The rule of thumb is measured on the typical device at 300 K without ageing.
-    leaf('T', 'temperature of published device data', 'K', 300),
-    leaf('c_mu', 'mobility factor of the typical corner', '1', 1),
-    leaf('dV_T', 'threshold shift of the typical corner', 'V', 0),
-    leaf('dV_age', 'no ageing', 'V', 0),
+    datum('T', 'temperature of published device data', 'K', 300),
+    datum('c_mu', 'mobility factor of the typical corner', '1', 1),
+    datum('dV_T', 'threshold shift of the typical corner', 'V', 0),
+    datum('dV_age', 'no ageing', 'V', 0),
   ]
 }

@@ -45,6 +45,8 @@ export interface CheckResult {
   readonly reason?: string
   /** Advisory checks are shown but do not move the case verdict. */
   readonly advisory?: boolean
+  /** A yes or no: its margin is 1 + guard or 0. */
+  readonly yesNo?: true
   readonly steps: readonly Step[]
 }
 

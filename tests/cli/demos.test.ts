@@ -2,6 +2,8 @@ import { join } from 'node:path'
 import { all, create, type EvalFunction, type MathJsInstance } from 'mathjs'
 import { describe, expect, it } from 'vitest'
 import type { Step } from '../../src/derivation/recorder.ts'
+import { optionKeys } from '../../src/scenario/keys/index.ts'
+import type { Keys } from '../../src/scenario/schema.ts'
 import type { CaseResult, CheckResult, Result, Verdict } from '../../src/verdict/result.ts'
 import { filesBelow, ROOT } from '../house/repository.ts'
 import { openShell } from './shell.ts'
@@ -73,6 +75,26 @@ function mistaken({ steps }: CheckResult): readonly string[] {
       return meant === true ? [] : [`${step.symbol}: ${name} is said to come from ${path}`]
     }),
   )
+}
+
+/** Keys by dotted path, with where they say that they are used. */
+function usedBy(keys: Keys, path = ''): readonly (readonly [string, readonly string[]])[] {
+  return Object.entries(keys).flatMap(([name, key]) => {
+    const at = path === '' ? name : `${path}.${name}`
+    if (key.type === 'group' || key.type === 'section') return usedBy(key.keys, at)
+    return key.usedBy === undefined ? [] : [[at, key.usedBy] as const]
+  })
+}
+const USED = new Map(usedBy(optionKeys))
+
+/** Leaves of keys that say they are not used by the sub-block of the check. */
+function misplaced({ id, subBlock, steps }: CheckResult): readonly string[] {
+  return steps.flatMap(({ path, kind, symbol }) => {
+    const users = path === undefined ? undefined : USED.get(path)
+    return kind !== 'leaf' || users === undefined || users.includes(subBlock)
+      ? []
+      : [`${id}: ${symbol} is said to come from ${path}, used by ${users.join(', ')}`]
+  })
 }
 
 function chainFaults(check: CheckResult): readonly string[] {
@@ -177,6 +199,11 @@ describe('demo scenarios', () => {
 
     it('every input comes from the key it is, not from one that has the same value by chance', () => {
       const wrong = result.cases.flatMap(({ checks }) => checks.flatMap(mistaken))
+      expect([...new Set(wrong)]).toEqual([])
+    })
+
+    it('every given value comes from a key that the sub-block says it uses', () => {
+      const wrong = result.cases.flatMap(({ checks }) => checks.flatMap(misplaced))
       expect([...new Set(wrong)]).toEqual([])
     })
 

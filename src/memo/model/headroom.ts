@@ -30,7 +30,7 @@ function headroomRow(given: CaseResult, check: CheckResult, guard: number, write
     available,
     needed: required,
     spare: spareText(check, write),
-    binding: clean([check.basis, ...reasons(check)].join('; ')),
+    binding: clean([check.basis, ...reasons(check), ...starved(given, check)].join('; ')),
     design: DESIGN.map(([name, unit]) =>
       designValue(given.results[`device.${check.subBlock}.${name}`], name, unit, guard, write),
     ),
@@ -40,6 +40,14 @@ function headroomRow(given: CaseResult, check: CheckResult, guard: number, write
 /** Why no operating point was found; ends of uncertain inputs stand in the table of all checks. */
 function reasons({ reason = '' }: CheckResult): readonly string[] {
   return reason.split('; ').filter((part) => part !== '' && !/^fails at the (low|high) end/.test(part))
+}
+
+/** Says when the device shown is not the one that the needed supply is for. */
+function starved(given: CaseResult, { subBlock }: CheckResult): readonly string[] {
+  const { reason } = given.results[`device.${subBlock}.fT_Hz`] ?? {}
+  return reason !== undefined && /capability/.test(reason)
+    ? ['device shown as fast as this supply allows']
+    : []
 }
 
 /** Millivolts to spare or missing. */

@@ -1,4 +1,4 @@
-import type { CaseResult, Result } from '../../verdict/result.ts'
+import type { CaseResult, CheckResult, Result } from '../../verdict/result.ts'
 import { clean } from '../text/clean.ts'
 import { marginText } from '../text/margin.ts'
 import type { QuantityText } from '../text/quantity.ts'
@@ -27,14 +27,27 @@ export function gridRows(result: Result, write: QuantityText): readonly GridRow[
   }))
 }
 
+/** Required with its sense, so that a ceiling reads as one; a yes or no in words. */
+function comparedValues(
+  check: CheckResult,
+  write: QuantityText,
+): { readonly required: string; readonly available: string } {
+  if (check.yesNo === true) return { required: 'yes', available: check.verdict === 'fail' ? 'no' : 'yes' }
+  const { required, available } = bothValues(check, write)
+  const sign = check.sense === 'at most' ? '≤' : '≥'
+  return { required: check.required === null ? required : `${sign} ${required}`, available }
+}
+
 /** What limits a case, at which operating point, and what would limit it next. */
 export function limitRow(given: CaseResult, guard: number, write: QuantityText): LimitRow {
   const check = limitingCheck(given)
-  const next = byMargin(given).find(({ id }) => id !== given.limitedBy)
+  const next = byMargin(given).find(
+    ({ id, yesNo, verdict }) => id !== given.limitedBy && !(yesNo === true && verdict === 'pass'),
+  )
   const unknowns = given.checks.filter(
     ({ verdict, advisory }) => verdict === 'unknown' && advisory !== true,
   ).length
-  const values = check === undefined ? { required: '–', available: '–' } : bothValues(check, write)
+  const values = check === undefined ? { required: '–', available: '–' } : comparedValues(check, write)
   return {
     anchor: anchor('case', given.option, given.node),
     option: clean(given.option),
@@ -45,7 +58,11 @@ export function limitRow(given: CaseResult, guard: number, write: QuantityText):
     margin: marginText(check?.margin ?? null, guard),
     at: pointText(check?.operatingPoint ?? null, write),
     next: next === undefined ? '–' : `${clean(next.title)} (${marginText(next.margin, guard)})`,
-    note:
+    note: [
       given.verdict === 'unknown' ? `not judged: ${unknowns} of ${given.checks.length} checks unknown` : '',
+      check?.yesNo === true && check.verdict === 'fail' ? clean(check.reason ?? '') : '',
+    ]
+      .filter((text) => text !== '')
+      .join('; '),
   }
 }

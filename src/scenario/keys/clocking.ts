@@ -2,13 +2,15 @@ import { choice, count, group, quantity, range, section } from '../schema.ts'
 import { profile, profileFile } from './profile.ts'
 
 const COMMON = 'common practice, no source'
+/** What the oscillator's, the loop's and the path's own values also decide. */
+const CLOCK = ['loop', 'jitter', 'power'] as const
 
 /** The oscillator. */
 export const oscillator = section('The oscillator. Without it no oscillator, divider or loop is judged.', {
   kind: choice(['LC', 'ring', 'CMOS-ring'], {
     meaning: 'LC tank, ring of CML stages, or ring of CMOS inverters.',
     required: true,
-    usedBy: ['lc_oscillator', 'ring_oscillator'],
+    usedBy: ['lc_oscillator', 'ring_oscillator', ...CLOCK],
   }),
   range: range({
     meaning: 'Lowest and highest frequency the oscillator must reach.',
@@ -18,19 +20,19 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     min: 1e7,
     max: 2e11,
     required: true,
-    usedBy: ['lc_oscillator', 'ring_oscillator', 'divider'],
+    usedBy: ['lc_oscillator', 'ring_oscillator', 'divider', 'clock_buffers', 'cmos_clock_buffers', ...CLOCK],
   }),
   pair: choice(['nMOS', 'complementary'], {
     meaning: 'Cross-coupled pair: nMOS only, or nMOS and pMOS.',
     default: 'nMOS',
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   tail: choice(['yes', 'no'], {
     meaning: 'Whether a tail current source feeds the pair.',
     default: 'yes',
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   cores: count({
     meaning: 'Tanks that share the range, each covering an equal ratio of it.',
@@ -39,7 +41,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 4,
     default: 1,
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   tank_q: quantity({
     meaning: 'Quality factor of the loaded tank over the range; computed from inductor and bank when absent.',
@@ -47,7 +49,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     unit: '1',
     min: 1,
     max: 60,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   inductor_q: quantity({
     meaning: "Quality factor of the inductor at the highest frequency; the node's own when absent.",
@@ -55,7 +57,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     unit: '1',
     min: 2,
     max: 60,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   bank_q: quantity({
     meaning: 'Quality factor of the switched capacitor bank at the highest frequency.',
@@ -65,7 +67,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 200,
     default: '20',
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   tank_reactance: quantity({
     meaning: 'Differential reactance of the tank inductor at the highest frequency.',
@@ -76,7 +78,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 1000,
     default: '10 Ω',
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   startup_gain: quantity({
     meaning: 'Small-signal loop gain required for a certain start at the worst corner.',
@@ -86,7 +88,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 10,
     default: '2.5',
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   overlap: quantity({
     meaning: 'Frequency reserve at each end of the range for process and temperature.',
@@ -97,7 +99,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 0.3,
     default: '5 %',
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   load_share: quantity({
     meaning: 'Share of the tank capacitance at the highest frequency that buffers take.',
@@ -107,7 +109,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 0.8,
     default: '0.10',
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   wire_share: quantity({
     meaning: 'Share of the tank capacitance at the highest frequency that wiring takes.',
@@ -117,7 +119,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 0.8,
     default: '0.10',
     source: COMMON,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   current: quantity({
     meaning: 'Supply current of the oscillator core, when fixed.',
@@ -126,7 +128,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     shown: 'mA',
     min: 1e-6,
     max: 0.5,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   amplitude: quantity({
     meaning: 'Differential peak amplitude across the tank, when fixed.',
@@ -134,7 +136,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     unit: 'V',
     min: 0.02,
     max: 6,
-    usedBy: ['lc_oscillator'],
+    usedBy: ['lc_oscillator', ...CLOCK],
   }),
   stages: count({
     meaning: 'Stages of a ring.',
@@ -143,7 +145,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 33,
     default: 4,
     source: COMMON,
-    usedBy: ['ring_oscillator'],
+    usedBy: ['ring_oscillator', ...CLOCK],
   }),
   fan_out: quantity({
     meaning: 'Load of each ring stage in multiples of its own input.',
@@ -163,7 +165,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 4,
     default: '1.2',
     source: COMMON,
-    usedBy: ['ring_oscillator'],
+    usedBy: ['ring_oscillator', ...CLOCK],
   }),
   reserve: quantity({
     meaning: "Tuning and process reserve of a ring's highest frequency.",
@@ -173,7 +175,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 3,
     default: '1.3',
     source: COMMON,
-    usedBy: ['ring_oscillator'],
+    usedBy: ['ring_oscillator', ...CLOCK],
   }),
   tail_noise: quantity({
     meaning:
@@ -184,7 +186,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 1,
     default: '1',
     source: COMMON,
-    usedBy: ['loop', 'jitter'],
+    usedBy: [...CLOCK],
   }),
   flicker_corner: quantity({
     meaning: "Offset below which the oscillator's noise is flicker noise; by kind of transistor when absent.",
@@ -193,7 +195,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     shown: 'kHz',
     min: 10,
     max: 1e8,
-    usedBy: ['loop', 'jitter'],
+    usedBy: [...CLOCK],
   }),
   noise_excess: quantity({
     meaning: 'Phase noise of a ring above the least that thermodynamics allow.',
@@ -203,7 +205,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     max: 30,
     default: '4 dB',
     source: COMMON,
-    usedBy: ['loop', 'jitter'],
+    usedBy: [...CLOCK],
   }),
   pushing: quantity({
     meaning: 'Supply pushing of the oscillator; by kind and frequency when absent.',
@@ -212,7 +214,7 @@ export const oscillator = section('The oscillator. Without it no oscillator, div
     shown: 'MHz/V',
     min: 1e3,
     max: 2e11,
-    usedBy: ['loop', 'jitter'],
+    usedBy: [...CLOCK],
   }),
   phase_noise: profile('Measured phase noise of the oscillator at its highest frequency.'),
   phase_noise_file: profileFile('The same as a CSV file.'),
@@ -225,7 +227,7 @@ export const divider = group('The first divider after the oscillator.', {
       'Kind of first divider. Only static CML division has a model; the others are unknown, never judged as static.',
     default: 'static',
     source: COMMON,
-    usedBy: ['divider'],
+    usedBy: ['divider', 'power'],
   }),
   fan_out: quantity({
     meaning:
@@ -246,14 +248,14 @@ export const clock = group('The clock path.', {
     meaning: 'Current-mode or full-swing distribution.',
     default: 'CML',
     source: COMMON,
-    usedBy: ['clock_buffers', 'cmos_clock_buffers'],
+    usedBy: ['clock_buffers', 'cmos_clock_buffers', ...CLOCK],
   }),
   phases_from: choice(['oscillator', 'divide-by-2'], {
     meaning:
       'How the phases are made: the oscillator runs at the clock frequency, or at twice it and a divider makes the phases.',
     default: 'oscillator',
     source: COMMON,
-    usedBy: ['lc_oscillator', 'ring_oscillator', 'divider'],
+    usedBy: ['lc_oscillator', 'ring_oscillator', 'divider', ...CLOCK],
   }),
   frequency: quantity({
     meaning:
@@ -263,7 +265,7 @@ export const clock = group('The clock path.', {
     shown: 'GHz',
     min: 1e6,
     max: 2e11,
-    usedBy: ['clock_buffers', 'cmos_clock_buffers'],
+    usedBy: ['clock_buffers', 'cmos_clock_buffers', ...CLOCK],
   }),
   fan_out: quantity({
     meaning: 'Load of each clock buffer in multiples of its own input.',
@@ -273,7 +275,7 @@ export const clock = group('The clock path.', {
     max: 16,
     default: '1',
     source: COMMON,
-    usedBy: ['clock_buffers'],
+    usedBy: ['clock_buffers', 'interpolator', ...CLOCK],
   }),
   gain: quantity({
     meaning: 'Small-signal gain of each clock buffer.',
@@ -283,13 +285,23 @@ export const clock = group('The clock path.', {
     max: 6,
     default: '1.4',
     source: COMMON,
-    usedBy: ['clock_buffers', 'interpolator', 'multiplexer', 'driver', 'divider'],
+    usedBy: [
+      'clock_buffers',
+      'interpolator',
+      'multiplexer',
+      'driver',
+      'divider',
+      'sampler',
+      'first_tap',
+      'transmit_pad',
+      ...CLOCK,
+    ],
   }),
   coupling: choice(['by-use', 'dc', 'ac'], {
     meaning: 'Coupling of the clock buffers: `by-use` is ac behind an LC oscillator, else dc.',
     default: 'by-use',
     source: COMMON,
-    usedBy: ['clock_buffers'],
+    usedBy: ['clock_buffers', ...CLOCK],
   }),
   cmos_period: quantity({
     meaning: 'Shortest clock period of full-swing CMOS buffers in fan-out-of-four delays.',
@@ -299,7 +311,7 @@ export const clock = group('The clock path.', {
     max: 20,
     default: '6',
     source: 'common practice, no source: 6 to 8',
-    usedBy: ['cmos_clock_buffers'],
+    usedBy: ['cmos_clock_buffers', ...CLOCK],
   }),
   distance: quantity({
     meaning: 'Length of the clock distribution.',
@@ -310,7 +322,7 @@ export const clock = group('The clock path.', {
     max: 0.05,
     default: '600 µm',
     source: COMMON,
-    usedBy: ['clock_buffers', 'jitter'],
+    usedBy: ['clock_buffers', ...CLOCK],
   }),
   repeater_span: quantity({
     meaning: 'Length that one buffer of the distribution drives.',
@@ -321,7 +333,7 @@ export const clock = group('The clock path.', {
     max: 5e-3,
     default: '300 µm',
     source: COMMON,
-    usedBy: ['jitter', 'power'],
+    usedBy: [...CLOCK],
   }),
   supply_ripple: quantity({
     meaning: 'Supply ripple on the clock path, peak to peak, above the tracking corner.',
@@ -332,7 +344,7 @@ export const clock = group('The clock path.', {
     max: 0.2,
     default: '5 mV',
     source: 'common practice, no source: a regulated clock supply',
-    usedBy: ['jitter'],
+    usedBy: [...CLOCK],
   }),
   regulator_noise: quantity({
     meaning: "Noise density of the oscillator's supply.",
@@ -343,7 +355,7 @@ export const clock = group('The clock path.', {
     max: 1e-5,
     default: '10 nV/√Hz',
     source: COMMON,
-    usedBy: ['loop', 'jitter'],
+    usedBy: [...CLOCK],
   }),
   supply_tone: section("A tone on the oscillator's supply.", {
     amplitude: quantity({
@@ -354,7 +366,7 @@ export const clock = group('The clock path.', {
       min: 1e-7,
       max: 0.2,
       required: true,
-      usedBy: ['jitter'],
+      usedBy: [...CLOCK],
     }),
     frequency: quantity({
       meaning: 'Its frequency.',
@@ -364,7 +376,7 @@ export const clock = group('The clock path.', {
       min: 1,
       max: 1e10,
       required: true,
-      usedBy: ['jitter'],
+      usedBy: [...CLOCK],
     }),
   }),
   phase_error: quantity({
@@ -376,7 +388,7 @@ export const clock = group('The clock path.', {
     max: 0.1,
     default: '0.5 %',
     source: COMMON,
-    usedBy: ['jitter'],
+    usedBy: [...CLOCK],
   }),
 })
 
@@ -390,20 +402,20 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     min: 1e4,
     max: 5e9,
     required: true,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   kind: choice(['type-II', 'realigned'], {
     meaning:
       'A type-II loop of third order, or an oscillator that the reference realigns or locks by injection.',
     default: 'type-II',
     source: COMMON,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   detector: choice(['charge-pump', 'sampling', 'sub-sampling'], {
     meaning: 'Kind of phase detector.',
     default: 'charge-pump',
     source: COMMON,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   floor: quantity({
     meaning: 'Normalised in-band phase-noise floor of the detector; by its kind when absent.',
@@ -411,7 +423,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     unit: 'dBc/Hz',
     min: -280,
     max: -150,
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   flicker: quantity({
     meaning:
@@ -420,7 +432,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     unit: 'dBc/Hz',
     min: -200,
     max: -60,
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   phase_margin: quantity({
     meaning: 'Phase margin that the filter is designed for, before the delay of sampling.',
@@ -430,7 +442,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 80,
     default: '60 deg',
     source: COMMON,
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   bandwidth: quantity({
     meaning: 'Loop bandwidth (unity gain); the best one is found when absent.',
@@ -439,7 +451,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     shown: 'MHz',
     min: 1e2,
     max: 1e9,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   charge_pump_current: quantity({
     meaning: 'Charge-pump current.',
@@ -450,7 +462,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 0.1,
     default: '500 µA',
     source: COMMON,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   tuning_gain: quantity({
     meaning: 'Tuning gain of the oscillator; by its kind and frequency when absent.',
@@ -459,7 +471,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     shown: 'MHz/V',
     min: 1e3,
     max: 2e11,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   lock_time: quantity({
     meaning: 'Longest allowed lock time. Writing it asks for the check.',
@@ -468,7 +480,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     shown: 'µs',
     min: 1e-8,
     max: 1,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   lock_tolerance: quantity({
     meaning: 'Frequency error that counts as locked.',
@@ -479,7 +491,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 0.01,
     default: '10 ppm',
     source: COMMON,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   tuning_voltage: quantity({
     meaning: 'Voltage over which the oscillator is tuned.',
@@ -489,7 +501,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 3,
     default: '0.4 V',
     source: COMMON,
-    usedBy: ['loop'],
+    usedBy: CLOCK,
   }),
   reference_floor: quantity({
     meaning: 'Phase-noise floor of the reference at its own frequency.',
@@ -499,7 +511,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: -60,
     default: '-160 dBc/Hz',
     source: 'common practice, no source: a good crystal oscillator',
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   reference_noise: profile(
     'Measured phase noise of the reference at its own frequency, in place of the floor.',
@@ -512,7 +524,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 40,
     default: 2,
     source: COMMON,
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   divider_floor: quantity({
     meaning:
@@ -521,13 +533,13 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     unit: 'dBc/Hz',
     min: -190,
     max: -60,
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   fractional: choice(['by-ratio', 'yes'], {
     meaning: 'Whether a modulator makes a fractional ratio: `by-ratio` when the ratio is not whole.',
     default: 'by-ratio',
     source: 'method of this planner',
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   modulator_order: count({
     meaning: 'Order of the modulator of a fractional loop.',
@@ -536,7 +548,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 5,
     default: 3,
     source: COMMON,
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   modulator_cancellation: quantity({
     meaning: "How far the modulator's noise is cancelled ahead of the filter.",
@@ -546,7 +558,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 60,
     default: '0 dB',
     source: COMMON,
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
   reference_spur: quantity({
     meaning: 'Reference spur of the output. Writing it adds its jitter.',
@@ -554,7 +566,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     unit: 'dBc',
     min: -200,
     max: -10,
-    usedBy: ['jitter'],
+    usedBy: CLOCK,
   }),
   band: range({
     meaning: 'Offsets over which phase noise is integrated.',
@@ -565,7 +577,7 @@ export const loop = section("The loop around the oscillator. Writing it asks for
     max: 2e10,
     default: ['1 kHz', '1 GHz'],
     source: COMMON,
-    usedBy: ['loop', 'jitter'],
+    usedBy: CLOCK,
   }),
 })
 

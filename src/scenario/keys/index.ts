@@ -4,8 +4,9 @@ import { channel, examine, fec, noise, pads, receiver, transmitter } from './lin
 
 const COMMON = 'common practice, no source'
 
-const multiple = (what: string, symbol: string, value: string, inPractice: string) =>
+const multiple = (usedBy: string, what: string, symbol: string, value: string, inPractice: string) =>
   quantity({
+    usedBy: [usedBy],
     meaning: `Rule of thumb for the ${what}: device speed over operating frequency.`,
     symbol,
     unit: '1',
@@ -28,29 +29,43 @@ const demand = group('Where the demand on device speed comes from.', {
     source: 'method of this planner: both are always computed and shown',
   }),
   multiples: group('Rule-of-thumb multiples k of the operating frequency.', {
-    lc_oscillator: multiple('LC oscillator', 'k', '3', '2.2 to 10'),
-    ring_oscillator: multiple('ring oscillator', 'k', '6', '4 to 10'),
-    divider: multiple('first divider', 'k', '2.5', '2 to 3.5'),
-    clock_buffers: multiple('CML clock buffers', 'k', '5', '3 to 10'),
+    lc_oscillator: multiple('lc_oscillator', 'LC oscillator', 'k', '3', '2.2 to 10'),
+    ring_oscillator: multiple('ring_oscillator', 'ring oscillator', 'k', '6', '4 to 10'),
+    divider: multiple('divider', 'first divider', 'k', '2.5', '2 to 3.5'),
+    clock_buffers: multiple('clock_buffers', 'CML clock buffers', 'k', '5', '3 to 10'),
     multiplexer_2: multiple(
+      'multiplexer',
       '2:1 output multiplexer',
       'k_mux',
       '2.3',
       'for each unit of fan-out into the driver',
     ),
     multiplexer_4: multiple(
+      'multiplexer',
       '4:1 output multiplexer',
       'k_mux',
       '3.2',
       'for each unit of fan-out into the driver',
     ),
-    driver: multiple('output driver', 'k', '3', '2 to 5'),
-    equaliser: multiple('receive equaliser', 'k', '5', '3 to 6'),
-    sampler: multiple('sampler', 'k', '8', '5 to 10'),
-    first_tap: multiple('first decision-feedback tap', 'k', '3', '2 to 4; dynamic slicers about 6'),
-    first_tap_dynamic: multiple('first decision-feedback tap with dynamic slicers', 'k', '6', 'about 6'),
-    track_and_hold: multiple('track-and-hold', 'k', '4', '3 to 6'),
-    interpolator: multiple('phase interpolator', 'k', '5.5', '3 to 6'),
+    driver: multiple('driver', 'output driver', 'k', '3', '2 to 5'),
+    equaliser: multiple('equaliser', 'receive equaliser', 'k', '5', '3 to 6'),
+    sampler: multiple('sampler', 'sampler', 'k', '8', '5 to 10'),
+    first_tap: multiple(
+      'first_tap',
+      'first decision-feedback tap',
+      'k',
+      '3',
+      '2 to 4; dynamic slicers about 6',
+    ),
+    first_tap_dynamic: multiple(
+      'first_tap',
+      'first decision-feedback tap with dynamic slicers',
+      'k',
+      '6',
+      'about 6',
+    ),
+    track_and_hold: multiple('track_and_hold', 'track-and-hold', 'k', '4', '3 to 6'),
+    interpolator: multiple('interpolator', 'phase interpolator', 'k', '5.5', '3 to 6'),
   }),
   formulas: group('Rules given as formulas; each replaces the multiple of its sub-block.', {
     lc_oscillator: ruleFormula('LC oscillator'),
@@ -85,7 +100,6 @@ export const optionKeys = {
     shown: 'Gb/s',
     min: 1e6,
     max: 1e12,
-    usedBy: ['link'],
   }),
   modulation: choice(['PAM-2', 'PAM-4', 'PAM-8'], { meaning: 'Pulse-amplitude modulation.' }),
   clocking: choice(['full-rate', 'half-rate', 'quarter-rate', 'eighth-rate'], {
@@ -98,7 +112,7 @@ export const optionKeys = {
     min: 1e-30,
     max: 0.1,
     uncertain: false,
-    usedBy: ['sampler', 'link', 'jitter'],
+    usedBy: ['sampler', 'track_and_hold', 'link', 'jitter'],
   }),
   process: group('Corner, temperature and ageing.', {
     corner: choice(['worst', 'slow', 'typical', 'fast'], {
@@ -200,6 +214,17 @@ export const optionKeys = {
   headroom: group('Voltages that the stacked stages spend.', {
     clock_swing: quantity({
       meaning: 'Single-ended swing of clock and logic stages.',
+      usedBy: [
+        'clock_buffers',
+        'ring_oscillator',
+        'interpolator',
+        'multiplexer',
+        'driver',
+        'jitter',
+        'loop',
+        'power',
+        'transmit_pad',
+      ],
       symbol: 'V_sw',
       unit: 'V',
       min: 0.05,
@@ -209,6 +234,7 @@ export const optionKeys = {
     }),
     latch_swing: quantity({
       meaning: 'Single-ended swing inside latches.',
+      usedBy: ['divider', 'sampler', 'first_tap', 'power'],
       symbol: 'V_sw',
       unit: 'V',
       min: 0.05,
