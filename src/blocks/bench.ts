@@ -16,9 +16,9 @@ export interface Case {
   readonly node: NodeValues
   readonly rules: Readonly<Partial<Record<string, UserRule>>>
   /** What one evaluation of the case found and need not find again; absent: everything is found anew. */
-  readonly kept?: Kept
+  readonly kept?: Kept | undefined
   /** Listens to what is read, when the settings tell it. */
-  readonly watch?: Watch
+  readonly watch?: Watch | undefined
 }
 
 /** The supply and the transistor of the stacked stages, or why there is none. */
@@ -89,8 +89,14 @@ export function benchAt(given: Case, at: OperatingPoint, t: Trace): Bench {
     at.tol_V,
     settings.supply.ir_drop,
   )
+  // Field by field and always the same ones: benches of one shape are what makes the hot path fast.
   const bench: Bench = {
-    ...given,
+    block: given.block,
+    settings,
+    node,
+    rules: given.rules,
+    kept: given.kept,
+    watch: given.watch,
     at,
     t,
     rates: ratesOf(given, t),
