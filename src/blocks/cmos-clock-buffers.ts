@@ -3,6 +3,7 @@ import { marginAtLeast } from '../derivation/margin.ts'
 import { deviceAt, typicalPoint } from '../device/conditions.ts'
 import { fo4At } from '../device/fo4.ts'
 import type { Bench } from './bench.ts'
+import { coreStressCheck } from './core-stress.ts'
 import { ASKED, notAsked, type Outcome, subBlock } from './sub-block.ts'
 
 /** T_min = N_FO4 FO4: a shorter period no longer reaches full swing. N_FO4 [1], FO4_here [s] → [s]. */
@@ -62,6 +63,7 @@ export const cmosClockBuffers = subBlock<FullSwing>({
       sense: 'at least',
       evaluate: periodOutcome,
     },
+    coreStressCheck('Full-swing clock buffers'),
   ],
   results: ({ delay }) => [{ name: 'cmos_clock_buffers.fo4_s', value: delay, unit: 's' }],
 })

@@ -1,6 +1,6 @@
 import { marginAtMost } from '../derivation/margin.ts'
 import { type Bench, type Case, highestSupplyVoltage } from './bench.ts'
-import type { Outcome } from './sub-block.ts'
+import type { CheckSpec, Outcome } from './sub-block.ts'
 
 /** Full-swing and complementary stages on a core supply that is lifted above what the node's devices stand. */
 
@@ -21,6 +21,22 @@ export function wholeSupplyOutcome(V_high: number, { t, node }: Bench): Outcome 
     available: V_high,
     margin: t.calc(marginAtMost, limit, V_high),
     basis: 'device limit of the node; the whole supply stands across one device',
+  }
+}
+
+/** The stress check of a sub-block whose devices stand on the core supply; `of` says when it has such devices. */
+export function coreStressCheck(
+  title: string,
+  of: (given: Case) => boolean = () => true,
+): CheckSpec<unknown> {
+  return {
+    name: 'core_stress',
+    title: `${title}: device stress on the core supply`,
+    quantity: 'drain–source voltage',
+    unit: 'V',
+    sense: 'at most',
+    asked: (given) => of(given) && coreRunsHigh(given),
+    evaluate: (_, bench) => coreStressOutcome(bench),
   }
 }
 

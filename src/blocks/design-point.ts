@@ -52,7 +52,7 @@ export function deviceResults(
     at.IC,
     J,
     gateVoltageAt(device, J, V_S, PLAIN),
-    saturationVoltageAt(device, J, GAIN_FLOOR.value, PLAIN),
+    saturationVoltageAt(device, J, speed.stage.c_sat ?? GAIN_FLOOR.value, PLAIN),
     gm_ID,
     selfGain.run(gm_ID, device.of.V_E, device.of.L),
     speed.stage.speed(speed.capability.J!, PLAIN),

@@ -1,14 +1,14 @@
-import { marginAtLeast } from '../derivation/margin.ts'
 import type { Trace } from '../derivation/trace.ts'
 import type { DeviceHere } from '../device/conditions.ts'
 import type { Bench, Case } from './bench.ts'
-import { designDensity, deviceResults, notedDesignDensity } from './design-point.ts'
-import { crossGainAt, latchDemand, latchFactorOf, latchLoadAt } from './latch-load.ts'
+import { designDensity, deviceResults } from './design-point.ts'
+import { regenerationOutcome } from './latch-gain.ts'
+import { latchDemand, latchFactorOf, latchLoadAt } from './latch-load.ts'
 import { aboveClockPair, latchStack } from './latch-stack.ts'
 import { peakingFactor } from './load.ts'
 import { type Stacked, stackChecks } from './stack-checks.ts'
-import { derivedRoute, stageSpeed } from './stage-speed.ts'
-import { ASKED, type CheckSpec, notAsked, type Outcome, subBlock, type Unprepared } from './sub-block.ts'
+import { stageSpeed } from './stage-speed.ts'
+import { ASKED, type CheckSpec, notAsked, subBlock, type Unprepared } from './sub-block.ts'
 
 interface Divider extends Stacked {
   readonly device: DeviceHere
@@ -30,23 +30,6 @@ function prepare(bench: Bench): Divider | Unprepared {
     trace.calc(latchDemand, f_osc, latchLoadAt(device, node.shares, A, fan_out, J, trace), k_latch, beta)
   const rule = { key: 'divider', f_op: f_osc, of: 'f_max', k: settings.demand.multiples.divider, beta }
   return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, V_off, device, V_sw }
-}
-
-const ONE = { symbol: 'A_regen', meaning: 'least loop gain that holds a state', unit: '1', source: 'law' }
-
-/** Gain is taken at the design point; beyond its reach, at the capability. */
-function regenerationOutcome({ speed, device, V_sw }: Divider, bench: Bench): Outcome {
-  const { t } = bench
-  const J = notedDesignDensity(speed, bench.guard, t)
-  if (J === null) return { ...derivedRoute(speed, t), basis: speed.capability.binding }
-  const required = t.leaf(ONE, 1)
-  const available = crossGainAt(device, J, V_sw, t)
-  return {
-    required,
-    available,
-    margin: t.calc(marginAtLeast, available, required),
-    basis: 'cross-coupled pair at the design point',
-  }
 }
 
 const isStatic = ({ settings }: Case): boolean => settings.divider.kind === 'static'

@@ -64,7 +64,8 @@ function pairChain(
     device,
     V_sw: t.calc(linearSwing, headroom.data_swing, V_lin, eta),
     V_lin,
-    V_pk: t.calc(peakInput, V_lin, A),
+    // What boost flattens is largest where the gain is lowest.
+    V_pk: t.calc(peakInput, V_lin, t.calc(lowFrequencyGain, A, chain.degeneration)),
     A,
     V_tail,
   })

@@ -75,8 +75,22 @@ export const unrolledLoopDemand = formula(
   (A, l, beta, kappa_int, UI) => ((A * l * Math.log(10)) / beta + kappa_int) / (2 * Math.PI * UI),
 )
 
-/** Device speed [Hz] that the loop needs of a device whose layout share is c_lay [1]. */
-export type LoopDemand = (c_lay: number, t: Trace) => number
+/** κ_int = 2πf_T τ: the regeneration of a current-mode latch in transit times of its device. f_T [Hz], tau [s] → [1]. */
+export const latchConstant = formula(
+  {
+    symbol: 'kappa_int',
+    meaning: 'regeneration time constant in transit times of the intrinsic device',
+    unit: '1',
+    source: 'definition',
+  },
+  (f_T, tau) => 2 * Math.PI * f_T * tau,
+)
+
+/**
+ * Device speed [Hz] that the loop needs of a device whose layout share is c_lay [1] and whose latch regenerates with
+ * κ_int [1]; without it, with that of a dynamic latch.
+ */
+export type LoopDemand = (c_lay: number, t: Trace, kappa_int?: number) => number
 
 /** The loop that the scenario asks for. */
 export function loopDemand(bench: Bench): LoopDemand {
@@ -94,8 +108,8 @@ function directLoop(bench: Bench): LoopDemand {
   const n_leg = constant(SUM_DRAINS, t)
   const kappa_r = constant(REGENERATION, t)
   const { m, d, w } = node.shares
-  return (c_lay, trace) => {
-    const kappa = trace.calc(intrinsicRegeneration, kappa_r, c_lay)
+  return (c_lay, trace, own) => {
+    const kappa = own ?? trace.calc(intrinsicRegeneration, kappa_r, c_lay)
     const load = trace.calc(legsLoad, receiver.fan_out, A, m, c_lay, n_leg, d, w)
     return trace.calc(
       directLoopDemand,
@@ -119,9 +133,9 @@ function unrolledLoop({ settings, node, rates, t }: Bench): LoopDemand {
   const phi = constant(NEXT, t)
   const kappa_r = constant(REGENERATION, t)
   const { m, d, w } = node.shares
-  return (c_lay, trace) => {
+  return (c_lay, trace, own) => {
     const load = trace.calc(legsLoad, phi, A, m, c_lay, n_leg, d, w)
-    const kappa = trace.calc(intrinsicRegeneration, kappa_r, c_lay)
+    const kappa = own ?? trace.calc(intrinsicRegeneration, kappa_r, c_lay)
     return trace.calc(unrolledLoopDemand, A, load, beta, kappa, rates.UI!)
   }
 }

@@ -32,7 +32,7 @@ export const flipFlopRate = formula(
   (f_d) => 1.2 * f_d,
 )
 
-const ONE_LATCH = {
+export const ONE_LATCH = {
   symbol: 'phi_o',
   meaning: 'a flip-flop drives one like latch',
   unit: '1',
@@ -95,22 +95,32 @@ export const latchRegeneration = formula(
   (l_latch, C_gg, rho_x, g_m, A_cross) => (l_latch * C_gg) / (rho_x * g_m * (1 - 1 / A_cross)),
 )
 
-/** Regeneration time constant [s] at the design point; null without an operating point or loop gain. */
-export function flipFlopTime({ speed, device, V_sw, A, phi_o }: FlipFlop, bench: Bench): number | null {
-  const { t, node, guard } = bench
-  const J = notedDesignDensity(speed, guard, t)
-  if (J === null) return null
+/** What the regeneration of a latch depends on beside its current per width. SI. */
+export interface LatchBody {
+  readonly device: DeviceHere
+  readonly V_sw: number
+  readonly A: number
+  readonly phi_o: number
+}
+
+/** Regeneration time constant [s] at current per width J [A/m]; null without loop gain. */
+export function latchTimeAt(
+  { device, V_sw, A, phi_o }: LatchBody,
+  J: number,
+  shares: Bench['node']['shares'],
+  t: Trace,
+): number | null {
   const A_cross = crossGainAt(device, J, V_sw, t)
   if (A_cross <= 1) return null
   const rho_x = t.leaf(CROSS_RATIO, CROSS_RATIO.value)
   const g_m = transconductanceAt(device, t.calc(crossDensity, J, rho_x), t)
   const { C_gg } = speedAt(device, t.calc(halfDensity, J), t)
-  return t.calc(
-    latchRegeneration,
-    latchLoadAt(device, node.shares, A, phi_o, J, t),
-    C_gg,
-    rho_x,
-    g_m,
-    A_cross,
-  )
+  return t.calc(latchRegeneration, latchLoadAt(device, shares, A, phi_o, J, t), C_gg, rho_x, g_m, A_cross)
+}
+
+/** Regeneration time constant [s] at the design point; null without an operating point or loop gain. */
+export function flipFlopTime(state: FlipFlop, bench: Bench): number | null {
+  const { t, node, guard } = bench
+  const J = notedDesignDensity(state.speed, guard, t)
+  return J === null ? null : latchTimeAt(state, J, node.shares, t)
 }

@@ -6,7 +6,7 @@ import { tailVoltage } from '../device/stacks/lines.ts'
 import type { Bench, StackSupply } from './bench.ts'
 import { constant } from './decision.ts'
 import { layoutShare } from './load.ts'
-import { highestInput, SWITCH_SHARE } from './sampling-switch.ts'
+import { SWITCH_SHARE, singleEndedSwing } from './sampling-switch.ts'
 import type { Stacked } from './stack-checks.ts'
 import { stageSpeed } from './stage-speed.ts'
 
@@ -57,7 +57,7 @@ export function holdBuffer(
   const stage = sourceFollower({
     device,
     V_tail,
-    V_swing: t.calc(highestInput, settings.receiver.converter.full_scale),
+    V_swing: t.calc(singleEndedSwing, settings.receiver.converter.full_scale),
     V_m: settings.headroom.reserve,
   })
   const [A_f, chi] = [constant(FOLLOWER_GAIN, t), constant(SWITCH_SHARE, t)]

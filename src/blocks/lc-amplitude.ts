@@ -1,6 +1,7 @@
 import { formula } from '../derivation/formula.ts'
 import { marginAtMost } from '../derivation/margin.ts'
-import { type Bench, type Case, nominalStackSupply } from './bench.ts'
+import type { Bench } from './bench.ts'
+import { momentaryLimit, NO_LIMIT } from './device-limits.ts'
 import { fixedShareAt, type LcOscillator } from './lc-start-up.ts'
 import { highEndQuality, tankResistance } from './lc-tank.ts'
 import { derivedRoute } from './stage-speed.ts'
@@ -59,13 +60,74 @@ export const complementaryPeakVoltage = formula(
   (V_high, V0) => V_high / 2 + V0 / 2,
 )
 
-/** Largest amplitude [V] that supply and tail leave. */
-export function amplitudeRoom({ pmos, speed, V_S }: LcOscillator, { t }: Bench): number {
-  return t.calc(pmos === null ? amplitudeLimit : complementaryAmplitudeLimit, speed.V, V_S)
+/** V_room = 2(V_peak − V_high): amplitude up to the peak limit, tank fed from the supply. V_peak [V], V_high [V] → [V]. */
+export const peakRoom = formula(
+  { symbol: 'V_room', meaning: 'amplitude that the peak limit leaves', unit: 'V', source: SUPPLY },
+  (V_peak, V_high) => 2 * (V_peak - V_high),
+)
+
+/** V_room = 2 V_peak − V_high: the same between complementary pairs. V_peak [V], V_high [V] → [V]. */
+export const complementaryPeakRoom = formula(
+  { symbol: 'V_room', meaning: 'amplitude that the peak limit leaves', unit: 'V', source: SUPPLY },
+  (V_peak, V_high) => 2 * V_peak - V_high,
+)
+
+const PLANNED = 'common practice, no source'
+
+/** V_least = 0.2 V0_limit: an amplitude below which no oscillator is planned. V0_limit [V] → [V]. */
+export const leastAmplitude = formula(
+  { symbol: 'V_least', meaning: 'least amplitude that is planned for', unit: 'V', source: PLANNED },
+  (V0_limit) => 0.2 * V0_limit,
+)
+
+/** V0 = max(V_least, min(0.8 V0_limit, V_room)): a fifth below the supply limit, inside the peak limit. V_least [V], V0_limit [V], V_room [V] → [V]. */
+export const plannedAmplitude = formula(
+  {
+    symbol: 'V0',
+    meaning: 'amplitude planned for: a fifth below the supply limit, and within the peak limit',
+    unit: 'V',
+    source: PLANNED,
+  },
+  (V_least, V0_limit, V_room) => Math.max(V_least, Math.min(0.8 * V0_limit, V_room)),
+)
+
+/** Largest amplitude [V] that supply and tail leave, at the lowest supply unless another is given [V]. */
+export function amplitudeRoom({ pmos, speed, V_S }: LcOscillator, { t }: Bench, V = speed.V): number {
+  return t.calc(pmos === null ? amplitudeLimit : complementaryAmplitudeLimit, V, V_S)
 }
 
-/** The amplitude [V] that the scenario fixes, or that its current gives at the highest frequency; J [A/m] of the pair. */
-export function statedAmplitude(state: LcOscillator, J: number, bench: Bench): number {
+/** The amplitude [V] that is planned where the scenario states neither amplitude nor current. */
+export function amplitudePlanned(state: LcOscillator, bench: Bench): number {
+  const { t } = bench
+  const V0_limit = amplitudeRoom(state, bench)
+  const V_least = t.calc(leastAmplitude, V0_limit)
+  const V_peak = momentaryLimit(bench, t)
+  const room = state.pmos === null ? peakRoom : complementaryPeakRoom
+  const V_room = V_peak === null ? t.leaf(NO_PEAK, V0_limit) : t.calc(room, V_peak, state.V_high)
+  return t.calc(plannedAmplitude, V_least, V0_limit, V_room)
+}
+
+const NO_PEAK = {
+  symbol: 'V_room',
+  meaning: 'no peak limit is known, so the supply alone limits the amplitude',
+  unit: 'V',
+  source: 'method of this planner',
+}
+
+/**
+ * The amplitude [V] that the scenario fixes, or that its current gives at the highest frequency.
+ *
+ * @param state the oscillator
+ * @param J current per width of the pair [A/m]
+ * @param bench the case at its operating point
+ * @param V supply that clips it [V]: the lowest where noise counts, the highest where stress does
+ */
+export function statedAmplitude(
+  state: LcOscillator,
+  J: number,
+  bench: Bench,
+  V: number = state.speed.V,
+): number {
   const { t } = bench
   const { tank, demand, speed, pmos } = state
   const { amplitude, current } = tank.oscillator
@@ -73,7 +135,7 @@ export function statedAmplitude(state: LcOscillator, J: number, bench: Bench): n
   const s_f = fixedShareAt(tank, demand.kappa, speed.stage.speed(J, t), t)
   const R_p = t.calc(tankResistance, highEndQuality(tank, s_f, t), tank.f_max, tank.L_d)
   const law = pmos === null ? amplitudeOfCurrent : complementaryAmplitudeOfCurrent
-  return t.calc(law, current!, R_p, amplitudeRoom(state, bench))
+  return t.calc(law, current!, R_p, amplitudeRoom(state, bench, V))
 }
 
 function amplitudeOutcome(state: LcOscillator, bench: Bench): Outcome {
@@ -87,32 +149,35 @@ function amplitudeOutcome(state: LcOscillator, bench: Bench): Outcome {
   }
 }
 
+/** A stated amplitude or current is judged as it is; a planned one by whether the least that is planned fits. */
 function peakOutcome(state: LcOscillator, bench: Bench): Outcome {
-  const { speed, pmos, V_high } = state
+  const { speed, pmos, V_high, tank } = state
+  const { t } = bench
   const { J, binding } = speed.capability
-  if (J === null) return { ...derivedRoute(speed, bench.t), basis: binding }
-  const limit = bench.node.supply.peak_limit
-  const law = pmos === null ? peakVoltage : complementaryPeakVoltage
-  const actual = bench.t.calc(law, V_high, statedAmplitude(state, J, bench))
+  if (J === null) return { ...derivedRoute(speed, t), basis: binding }
+  const limit = momentaryLimit(bench, t)
+  if (limit === null) {
+    return { required: null, available: null, margin: null, basis: 'not computed', reason: NO_LIMIT }
+  }
+  const stated = tank.oscillator.amplitude !== null || tank.oscillator.current !== null
+  const V0 = stated
+    ? statedAmplitude(state, J, bench, V_high)
+    : t.calc(leastAmplitude, amplitudeRoom(state, bench))
+  const actual = t.calc(pmos === null ? peakVoltage : complementaryPeakVoltage, V_high, V0)
   return {
     required: limit,
     available: actual,
-    margin: bench.t.calc(marginAtMost, limit, actual),
-    basis: 'peak limit of the node',
+    margin: t.calc(marginAtMost, limit, actual),
+    basis: stated ? 'peak limit of the node' : 'peak limit of the node; least amplitude that is planned',
     supply: V_high,
   }
-}
-
-/** The node states a peak limit for its core devices only. */
-function coreDevices({ settings, node }: Case): boolean {
-  const chosen = nominalStackSupply(settings, node)
-  return !('missing' in chosen) && chosen.device === node.nmos
 }
 
 /** Checks of the amplitude. A current beyond the supply limit only clips, so the limit judges a stated amplitude. */
 export const AMPLITUDE_CHECKS: readonly CheckSpec<LcOscillator>[] = [
   {
     name: 'amplitude',
+    because: 'the scenario states no amplitude',
     title: 'LC oscillator: amplitude under the supply',
     quantity: 'differential amplitude',
     unit: 'V',
@@ -126,10 +191,6 @@ export const AMPLITUDE_CHECKS: readonly CheckSpec<LcOscillator>[] = [
     quantity: 'peak voltage',
     unit: 'V',
     sense: 'at most',
-    asked: (given) => {
-      const { amplitude, current } = given.settings.oscillator!
-      return (amplitude !== null || current !== null) && coreDevices(given)
-    },
     evaluate: peakOutcome,
   },
 ]

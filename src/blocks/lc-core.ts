@@ -1,7 +1,7 @@
 import { formula } from '../derivation/formula.ts'
 import type { Bench } from './bench.ts'
 import {
-  amplitudeRoom,
+  amplitudePlanned,
   complementaryCurrentForAmplitude,
   currentForAmplitude,
   statedAmplitude,
@@ -10,17 +10,6 @@ import { fixedShareAt, type LcOscillator, sideEfficiency, startUpTransconductanc
 import { lowEndQuality, tankResistance } from './lc-tank.ts'
 
 /** What the core of an LC oscillator swings and draws at its design point. */
-
-/** V0 = 0.8 V0_limit. V0_limit [V] → [V]. */
-export const plannedAmplitude = formula(
-  {
-    symbol: 'V0',
-    meaning: 'amplitude planned for: a fifth below the supply limit',
-    unit: 'V',
-    source: 'common practice, no source',
-  },
-  (V0_limit) => 0.8 * V0_limit,
-)
 
 /** I = 2 g_m/(g_m/I_D): both sides at start-up. g_m_start [S], gm_ID [1/V] → [A]. */
 export const startUpCurrent = formula(
@@ -60,7 +49,7 @@ export function coreAt(state: LcOscillator, J: number, bench: Bench): LcCore {
   const Q_lo = lowEndQuality(tank, s_f, t)
   const R_lo = t.calc(tankResistance, Q_lo, tank.f_lo, tank.L_d)
   const stated = amplitude !== null || current !== null
-  const V0 = stated ? statedAmplitude(state, J, bench) : t.calc(plannedAmplitude, amplitudeRoom(state, bench))
+  const V0 = stated ? statedAmplitude(state, J, bench) : amplitudePlanned(state, bench)
   const law = pmos === null ? currentForAmplitude : complementaryCurrentForAmplitude
   const g_m = t.calc(startUpTransconductance, startup_gain, Q_lo, tank.f_lo, tank.L_d)
   const I_start = t.calc(startUpCurrent, g_m, sideEfficiency(nmos, pmos, J, t))

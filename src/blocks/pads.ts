@@ -155,6 +155,7 @@ function pad(end: End, title: string): AnySubBlock {
       },
       {
         name: 'return_loss',
+        because: 'the scenario asks for no return loss',
         title: `${title}: return loss`,
         quantity: 'return loss',
         unit: 'dB',

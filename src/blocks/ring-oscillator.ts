@@ -8,6 +8,7 @@ import { halfDensity, tailVoltage } from '../device/stacks/lines.ts'
 import { switchedPair } from '../device/stacks/switched-pair.ts'
 import { SWITCH_FLOOR } from '../device/voltage.ts'
 import type { Bench, Case } from './bench.ts'
+import { coreStressCheck } from './core-stress.ts'
 import { deviceResults } from './design-point.ts'
 import { layoutShare, loadFactor } from './load.ts'
 import { rangeCheck } from './oscillator-range.ts'
@@ -128,6 +129,7 @@ const CHECKS: readonly CheckSpec<Ring>[] = [
     asked: (given) => !isCurrentMode(given),
     evaluate: frequencyOutcome,
   },
+  coreStressCheck('Ring oscillator', (given) => !isCurrentMode(given)),
   rangeCheck('Ring oscillator'),
 ]
 

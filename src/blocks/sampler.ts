@@ -2,6 +2,7 @@ import { marginOfProbability } from '../derivation/margin.ts'
 import { saturationAt } from '../device/fixed-bias.ts'
 import { efficiency, selfGain } from '../device/speed.ts'
 import type { Bench, Case } from './bench.ts'
+import { coreStressCheck } from './core-stress.ts'
 import {
   constant,
   decisionPeriod,
@@ -20,6 +21,7 @@ import {
   timeToRegenerate,
 } from './dynamic-latch.ts'
 import { type FlipFlop, flipFlop, flipFlopTime } from './flip-flop.ts'
+import { regenerationOutcome } from './latch-gain.ts'
 import { aboveClockPair } from './latch-stack.ts'
 import { type Stacked, stackChecks } from './stack-checks.ts'
 import {
@@ -111,6 +113,7 @@ const CHECKS: readonly CheckSpec<Sampler>[] = [
   })),
   {
     name: 'metastability',
+    because: 'the scenario states no edge samplers',
     title: 'Sampler: metastability of edge samples',
     quantity: 'probability of an undecided sample',
     unit: '1',
@@ -118,6 +121,16 @@ const CHECKS: readonly CheckSpec<Sampler>[] = [
     asked: ({ settings }) => settings.receiver.edge_samplers === 'yes',
     evaluate: metastabilityOutcome,
   },
+  {
+    name: 'regeneration',
+    title: 'Sampler: regeneration',
+    quantity: 'loop gain of the cross-coupled pair',
+    unit: '1',
+    sense: 'at least',
+    asked: isFlipFlop,
+    evaluate: (state, bench) => regenerationOutcome(state as FlipFlop, bench),
+  },
+  coreStressCheck('Sampler', (given) => !isFlipFlop(given)),
 ]
 
 function results(state: Sampler, bench: Bench): readonly NamedResult[] {

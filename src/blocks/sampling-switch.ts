@@ -11,10 +11,26 @@ import type { Bench } from './bench.ts'
 
 const DRIVE = 'derived: gate over channel, body effect of the raised channel included'
 
-/** V_in = V_FS/2: the highest single-ended input, the signal standing on ground. V_FS [V] differential peak to peak → [V]. */
-export const highestInput = formula(
-  { symbol: 'V_in', meaning: 'highest single-ended input', unit: 'V', source: 'definition' },
+/** V_swing = V_FS/2: single-ended swing of a full-scale signal. V_FS [V] differential peak to peak → [V]. */
+export const singleEndedSwing = formula(
+  {
+    symbol: 'V_swing',
+    meaning: 'single-ended swing of a full-scale signal',
+    unit: 'V',
+    source: 'definition',
+  },
   (V_FS) => V_FS / 2,
+)
+
+/** V_in = V_need − V_m: the buffer's input at the top of the signal. V_need [V] supply that the buffer needs, V_m [V] reserve → [V]. */
+export const highestInput = formula(
+  {
+    symbol: 'V_in',
+    meaning: 'highest single-ended input: common mode and peak that the buffer behind it asks for',
+    unit: 'V',
+    source: 'derived: the sampled node is the gate of the buffer',
+  },
+  (V_need, V_m) => V_need - V_m,
 )
 
 /** V_gate = V − (n − 1) V_in: boosted above the signal by the supply. V [V], n [1], V_in [V] → [V]. */
@@ -82,9 +98,9 @@ function offAt(device: DeviceHere, d: number, t: Trace): number {
   return t.calc(offCapacitance, d, t.calc(laidOutCapacitance, C_gg, device.of.C_lay))
 }
 
-/** Cut-off frequency [Hz] of the sampling switch at its highest input; complementary ones at half the supply. */
-export function samplingSwitch({ settings, nmos, pmos, node, V_core, t }: Bench): number {
-  const { switch: kind, full_scale } = settings.receiver.converter
+/** Cut-off frequency [Hz] of the sampling switch at its highest input V_in [V], the level that the buffer behind it asks for; complementary ones at half the supply. */
+export function samplingSwitch({ settings, nmos, pmos, node, V_core, t }: Bench, V_in: number): number {
+  const { switch: kind } = settings.receiver.converter
   const { d } = node.shares
   if (kind === 'complementary') {
     const V_half = t.calc(halfSupply, V_core)
@@ -93,7 +109,6 @@ export function samplingSwitch({ settings, nmos, pmos, node, V_core, t }: Bench)
     const C_off = t.calc(parallelCapacitance, offAt(nmos, d, t), offAt(pmos, d, t))
     return t.calc(switchFrequency, t.calc(parallelResistance, R_n, R_p), C_off)
   }
-  const V_in = t.calc(highestInput, full_scale)
   const drive = kind === 'boosted' ? boostedDrive : plainDrive
   const R_on = onResistanceAt(nmos, t.calc(drive, V_core, nmos.of.n, V_in), t)
   return t.calc(switchFrequency, R_on, offAt(nmos, d, t))

@@ -1,6 +1,8 @@
 import { formula } from '../derivation/formula.ts'
 import { marginAtMost } from '../derivation/margin.ts'
+import { PLAIN } from '../derivation/trace.ts'
 import { type Bench, type Case, nominalStackSupply } from './bench.ts'
+import { continuousLimit, NO_LIMIT } from './device-limits.ts'
 import { headroomOutcome, type StageSpeed, speedOutcome } from './stage-speed.ts'
 import type { CheckSpec, Outcome } from './sub-block.ts'
 
@@ -47,9 +49,10 @@ export function stackChecks(title: string): readonly CheckSpec<Stacked>[] {
 /** Whether the stacked stages of a case run above what their devices stand. */
 export function stackRunsHigh({ settings, node }: Case): boolean {
   const chosen = nominalStackSupply(settings, node)
-  if ('missing' in chosen || chosen.device !== node.nmos) return false
+  if ('missing' in chosen) return false
   const tolerance = settings.supply.tolerance ?? node.supply.tolerance
-  return chosen.V_nom * (1 + tolerance) > node.supply.device_limit
+  const limit = continuousLimit({ settings, node }, PLAIN)
+  return limit === null || chosen.V_nom * (1 + tolerance) > limit
 }
 
 /** V_DS = V_high − V_S: the device that is off, its drain at the supply. V_high [V], V_S [V] → [V]. */
@@ -65,8 +68,11 @@ export const offStress = formula(
 
 /** The stress check of a stack that runs above the node's device limit. V_S is the common source node [V]. */
 export function stressOutcome(V_high: number, V_S: number, bench: Bench): Outcome {
-  const limit = bench.node.supply.device_limit
+  const limit = continuousLimit(bench, bench.t)
   const stress = bench.t.calc(offStress, V_high, V_S)
+  if (limit === null) {
+    return { required: null, available: stress, margin: null, basis: 'not computed', reason: NO_LIMIT }
+  }
   return {
     required: limit,
     available: stress,

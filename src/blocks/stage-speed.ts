@@ -221,16 +221,38 @@ export function headroomOutcome(speed: StageSpeed, bench: Bench): Outcome {
   const wanted = densityForSpeed(stage, found, speed.demand, 1)
   const J = noteRequired(wanted.J, wanted.reached, stage, t)
   const V_need = stage.supplyNeeded(J, t)
-  return {
-    required: V_need,
-    available: V,
-    margin: t.calc(marginAtLeast, V, V_need),
-    basis: stage.bindingAt(J),
-    ...(!wanted.reached
-      ? { reason: 'the required speed is out of reach at any supply; judged at the highest speed there is' }
-      : {}),
-  }
+  const enough = t.calc(marginAtLeast, V, V_need)
+  const shared = { required: V_need, available: V, basis: stage.bindingAt(J) }
+  if (wanted.reached) return { ...shared, margin: enough }
+  const reason = 'the required speed is out of reach at any supply; judged at the highest speed there is'
+  const demand = speed.demand(J, t)
+  // A demand without bound is not one on speed: what makes it so is judged by a check of its own.
+  if (!Number.isFinite(demand)) return { ...shared, margin: enough, reason }
+  const share = t.calc(speedShare, stage.speed(J, t), demand)
+  return { ...shared, margin: t.calc(unreachedMargin, enough, share), reason }
 }
+
+/** f_T/f_T_req at the highest speed that any supply gives. f_T [Hz], f_T_req [Hz] → [1]. */
+export const speedShare = formula(
+  {
+    symbol: 'f_share',
+    meaning: 'highest speed at any supply over the required speed',
+    unit: '1',
+    source: 'definition',
+  },
+  (f_T, f_T_req) => f_T / f_T_req,
+)
+
+/** The smaller of both: no supply gives the speed, so the margin stays below 1. margin_V [1], f_share [1] → [1]. */
+export const unreachedMargin = formula(
+  {
+    symbol: 'margin',
+    meaning: 'supply, and speed at any supply, whichever lacks more',
+    unit: '1',
+    source: 'method of this planner',
+  },
+  (margin_V, f_share) => Math.min(margin_V, f_share),
+)
 
 function noteRequired(J: number, reached: boolean, stage: Stage, t: Trace): number {
   if (J === stage.J_lim) return J

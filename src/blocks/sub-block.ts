@@ -36,6 +36,8 @@ export interface CheckSpec<State> {
   readonly yesNo?: true
   /** Absent: always asked. */
   readonly asked?: (given: Case) => boolean
+  /** What the scenario would have to state; with it, a check that was not asked is listed as not examined. */
+  readonly because?: string
   readonly evaluate: (state: State, bench: Bench) => Outcome
 }
 

@@ -10,10 +10,12 @@ import {
   resolutionRatio,
   subConverterLimit,
 } from './converter-need.ts'
+import { coreStressCheck } from './core-stress.ts'
 import { constant, subConverterRate } from './decision.ts'
-import { deviceResults } from './design-point.ts'
+import { deviceResults, notedDesignDensity } from './design-point.ts'
 import { holdBuffer } from './hold-buffer.ts'
 import {
+  highestInput,
   noiseCapacitance,
   rankCapacitance,
   SUB_INPUT,
@@ -23,6 +25,7 @@ import {
   switchDemand,
 } from './sampling-switch.ts'
 import { type Stacked, stackChecks } from './stack-checks.ts'
+import { derivedRoute } from './stage-speed.ts'
 import {
   ASKED,
   type CheckSpec,
@@ -64,12 +67,21 @@ const unknown = (reason: string): Outcome => ({
   reason,
 })
 
-function switchOutcome(_: TrackAndHold, bench: Bench): Outcome {
-  const { t, rates, V_core } = bench
+function switchOutcome({ speed }: TrackAndHold, bench: Bench): Outcome {
+  const { t, rates, V_core, settings } = bench
+  const J = notedDesignDensity(speed, bench.guard, t)
+  if (J === null) return { ...derivedRoute(speed, t), basis: speed.capability.binding }
   const required = t.calc(switchDemand, rates.f_N!, constant(SWITCH_SHARE, t))
-  const available = samplingSwitch(bench)
+  const V_in = t.calc(highestInput, speed.stage.supplyNeeded(J, t), settings.headroom.reserve)
+  const available = samplingSwitch(bench, V_in)
   const margin = t.calc(marginAtLeast, available, required)
-  return { required, available, margin, basis: 'on-resistance at the lowest core supply', supply: V_core }
+  return {
+    required,
+    available,
+    margin,
+    basis: 'on-resistance at the lowest core supply, at the highest input of the buffer',
+    supply: V_core,
+  }
 }
 
 function resolutionOutcome({ need }: TrackAndHold, { settings, t }: Bench): Outcome {
@@ -100,25 +112,31 @@ function rateOutcome({ need }: TrackAndHold, { settings, node, nmos, rates, V_co
   }
 }
 
-/** Necessary, not sufficient: aperture noise alone must stay within all the noise that the decision allows. */
-function apertureOutcome({ need }: TrackAndHold, { settings, rates, t }: Bench): Outcome {
-  const { aperture_jitter } = settings.receiver.converter
-  if (aperture_jitter === null) {
-    return unknown('the jitter of the loop is not evaluated in this version and no aperture_jitter is stated')
-  }
-  if (need.SNR_FS === null) return unknown(NO_TARGET)
-  const required = need.SNR_FS
-  const available = t.calc(apertureRatio, rates.f_N!, aperture_jitter)
+function apertureOutcome({ need }: TrackAndHold, bench: Bench): Outcome {
+  return apertureAgainst(need, bench.settings.receiver.converter.aperture_jitter!, bench)
+}
+
+/**
+ * Necessary, not sufficient: aperture noise alone must stay within all the noise that the decision allows.
+ *
+ * @param need what the converter needs
+ * @param sigma_j sampling jitter, rms [s]
+ * @param bench the case at its operating point
+ */
+export function apertureAgainst({ SNR_FS }: ConverterNeed, sigma_j: number, { rates, t }: Bench): Outcome {
+  if (SNR_FS === null) return unknown(NO_TARGET)
+  const available = t.calc(apertureRatio, rates.f_N!, sigma_j)
   return {
-    required,
+    required: SNR_FS,
     available,
-    margin: t.calc(marginInDecibel, available, required),
+    margin: t.calc(marginInDecibel, available, SNR_FS),
     basis: 'aperture noise of a full-scale sine at the Nyquist frequency against all noise allowed',
   }
 }
 
 const CHECKS: readonly CheckSpec<TrackAndHold>[] = [
   ...stackChecks('Track-and-hold buffer'),
+  coreStressCheck('Sampling switch and converter'),
   {
     name: 'switch',
     title: 'Track-and-hold: sampling switch',
@@ -137,6 +155,7 @@ const CHECKS: readonly CheckSpec<TrackAndHold>[] = [
   },
   {
     name: 'resolution',
+    because: 'the scenario states no resolution',
     title: 'Converter: resolution',
     quantity: 'full-scale sine over quantisation noise',
     unit: 'dB',
@@ -150,7 +169,9 @@ const CHECKS: readonly CheckSpec<TrackAndHold>[] = [
     quantity: 'full-scale sine over aperture noise',
     unit: 'dB',
     sense: 'at least',
-    asked: ({ settings }) => settings.receiver.converter.aperture_jitter !== null || settings.loop !== null,
+    because:
+      'the scenario states no aperture_jitter; where it states a loop, the jitter of that clock is judged',
+    asked: ({ settings }) => settings.receiver.converter.aperture_jitter !== null,
     evaluate: apertureOutcome,
   },
 ]

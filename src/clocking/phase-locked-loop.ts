@@ -1,4 +1,5 @@
 import type { Bench } from '../blocks/bench.ts'
+import { converterNeed } from '../blocks/converter-need.ts'
 import {
   ASKED,
   type CheckSpec,
@@ -8,6 +9,7 @@ import {
   subBlock,
   type Unprepared,
 } from '../blocks/sub-block.ts'
+import { apertureAgainst } from '../blocks/track-and-hold.ts'
 import { marginAtMost } from '../derivation/margin.ts'
 import { PLAIN } from '../derivation/trace.ts'
 import { quantile } from './budget/allowances.ts'
@@ -55,6 +57,16 @@ function lockOutcome(loop: ClockLoop, bench: Bench): Outcome {
   }
 }
 
+/** All random jitter of the sampling clock against what the converter may have. */
+function apertureOutcome(_: ClockLoop, bench: Bench): Outcome {
+  const lines = bench.once(budgetLinesAt)
+  if ('unknown' in lines) {
+    return { required: null, available: null, margin: null, basis: 'not computed', reason: lines.unknown }
+  }
+  if ('short' in lines) return { ...lines.short, basis: lines.binding }
+  return apertureAgainst(converterNeed(bench), lines.sigma_all, bench)
+}
+
 const CHECKS: readonly CheckSpec<State>[] = [
   {
     name: 'bandwidth',
@@ -67,12 +79,23 @@ const CHECKS: readonly CheckSpec<State>[] = [
   },
   {
     name: 'lock_time',
+    because: 'the scenario states no lock time',
     title: 'Loop: lock time',
     quantity: 'time to lock',
     unit: 's',
     sense: 'at most',
     asked: ({ settings }) => settings.loop?.lock_time != null,
     evaluate: judged(lockOutcome),
+  },
+  {
+    name: 'aperture',
+    title: 'Converter: aperture jitter of the clock',
+    quantity: 'full-scale sine over aperture noise',
+    unit: 'dB',
+    sense: 'at least',
+    asked: ({ block, settings: { receiver } }) =>
+      block === 'link' && receiver.kind === 'converter' && receiver.converter.aperture_jitter === null,
+    evaluate: judged(apertureOutcome),
   },
   {
     name: 'credible',

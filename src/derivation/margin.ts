@@ -8,10 +8,10 @@ export const marginAtLeast = formula(
   (available, required) => available / required,
 )
 
-/** margin = limit/actual, for "at most" checks. required [any] the limit, available [the same] the actual → [1]. */
+/** margin = limit/actual, for "at most" checks; a limit that nothing is used of counts as a million. required [any] the limit, available [the same] the actual → [1]. */
 export const marginAtMost = formula(
   { symbol: 'margin', meaning: 'limit over actual', unit: '1', source: METHOD },
-  (required, available) => required / available,
+  (required, available) => required / Math.max(available, required / 1e6),
 )
 
 /** margin = 10^(Δ/20), Δ positive when better. available [dB], required [dB] → [1]. */

@@ -48,19 +48,23 @@ export class KnownLeaves {
   /** The leaf of this symbol and value; of several, one that is used for the purpose, else one used anywhere. */
   named(symbol: string, value: number, purpose: string): KnownLeaf | undefined {
     const own = this.#byValue.get(value)?.filter((leaf) => leaf.symbol === symbol) ?? []
-    const fits = (leaf: KnownLeaf): number =>
-      leaf.usedBy === undefined ? 1 : leaf.usedBy.includes(purpose) ? 2 : 0
-    const best = own.reduce<KnownLeaf | undefined>(
-      (most, leaf) => (most === undefined || fits(leaf) > fits(most) ? leaf : most),
-      undefined,
-    )
-    return best ?? this.#below?.named(symbol, value, purpose)
+    return mostFitting(own, purpose) ?? this.#below?.named(symbol, value, purpose)
   }
 
-  /** Any leaf of this value. */
-  alike(value: number): KnownLeaf | undefined {
-    return this.#byValue.get(value)?.[0] ?? this.#below?.alike(value)
+  /** Any leaf of this value, rather one that is used for the purpose. */
+  alike(value: number, purpose: string): KnownLeaf | undefined {
+    return mostFitting(this.#byValue.get(value) ?? [], purpose) ?? this.#below?.alike(value, purpose)
   }
+}
+
+/** The first of those that say they are used for the purpose, else of those that say nothing, else of all. */
+function mostFitting(leaves: readonly KnownLeaf[], purpose: string): KnownLeaf | undefined {
+  const fits = ({ usedBy }: KnownLeaf): number =>
+    usedBy === undefined ? 1 : usedBy.includes(purpose) ? 2 : 0
+  return leaves.reduce<KnownLeaf | undefined>(
+    (most, leaf) => (most === undefined || fits(leaf) > fits(most) ? leaf : most),
+    undefined,
+  )
 }
 
 /** Thrown when an input cannot be traced to an earlier step or a known leaf: a fault of the program. */
@@ -156,7 +160,7 @@ export class Recorder implements Trace {
     if (named !== undefined) return this.#adopt(named)
     const latest = places.at(-1)
     if (latest !== undefined) return latest
-    const alike = this.#known.alike(value)
+    const alike = this.#known.alike(value, this.#purpose)
     if (alike !== undefined) return this.#adopt(alike)
     throw new DerivationGap(`no earlier step or known value yields ${name} = ${value}`)
   }

@@ -29,7 +29,7 @@ export const effectiveCurrent = formula(
   (J_on, J_mid) => (J_on + J_mid) / 2,
 )
 
-/** FO4_here = FO4 (V/I_eff)/(V_typ/I_typ). FO4 [s] datum, V [V], I_eff [A/m], I_typ [A/m], V_typ [V] → [s]. */
+/** FO4_here = FO4 (max(V, U_T)/I_eff)/(V_typ/I_typ): below U_T the drain voltage, not the gate, limits the current. FO4 [s] datum, V [V], U_T [V], I_eff [A/m], I_typ [A/m], V_typ [V] → [s]. */
 export const scaledFo4 = formula(
   {
     symbol: 'FO4_here',
@@ -37,7 +37,7 @@ export const scaledFo4 = formula(
     unit: 's',
     source: 'derived: delay C V/I_eff with the same capacitance as at the datum',
   },
-  (FO4, V, I_eff, I_typ, V_typ) => FO4 * (V / I_eff / (V_typ / I_typ)),
+  (FO4, V, U_T, I_eff, I_typ, V_typ) => FO4 * (Math.max(V, U_T) / I_eff / (V_typ / I_typ)),
 )
 
 const DATUM_SUPPLY = {
@@ -79,5 +79,5 @@ export function fo4At(
   const I_eff = switchingCurrent(nmos, V, t)
   const V_typ = t.leaf(DATUM_SUPPLY, node.supply.core)
   const I_typ = switchingCurrent(nmosTypical, V_typ, t)
-  return t.calc(scaledFo4, node.fo4, V, I_eff, I_typ, V_typ)
+  return t.calc(scaledFo4, node.fo4, V, nmos.U_T, I_eff, I_typ, V_typ)
 }

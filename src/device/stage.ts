@@ -12,6 +12,7 @@ export type Line =
   | 'input'
   | 'start-up voltage'
   | 'follower'
+  | 'regeneration'
 
 /**
  * A stage with a bias current per width J to choose. Supply lines say how many volts J costs; the other lines
@@ -37,6 +38,8 @@ export interface Stage {
   readonly J_low: number
   /** Largest admissible J. */
   readonly J_lim: number
+  /** Floor of the saturation voltage in thermal voltages that its lines take; absent for that of gain devices. */
+  readonly c_sat?: number
   /** Numbers the residuals rest on, for the derivation. */
   readonly givens: Readonly<Record<string, number>>
 }

@@ -193,10 +193,26 @@ export const nodeKeys = {
     }),
     io: quantity({
       meaning: 'Nominal input/output supply (thick-oxide devices).',
-      symbol: 'V_nom',
+      symbol: 'V_io',
       unit: 'V',
       min: 0.5,
       max: 6,
+    }),
+    thick_limit: quantity({
+      meaning:
+        'Largest continuous V_GS, V_GD and V_DS of the thick-oxide device; 1.1 times the io supply when absent.',
+      symbol: 'V_limit',
+      unit: 'V',
+      min: 0.5,
+      max: 10,
+    }),
+    thick_peak: quantity({
+      meaning:
+        'Largest momentary node voltage of an oscillating thick-oxide device; 1.6 times the io supply when absent.',
+      symbol: 'V_peak',
+      unit: 'V',
+      min: 0.5,
+      max: 16,
     }),
     tolerance: quantity({
       meaning: 'Supply tolerance.',

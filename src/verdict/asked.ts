@@ -28,7 +28,13 @@ export function askedOf(given: Case): Asking {
     } else if (!asked.yes) {
       notExamined.push({ subBlock: block.id, title: block.title, reason: asked.because })
     } else {
-      blocks.push({ block, checks: askedChecks(block.checks, given) })
+      const checks = askedChecks(block.checks, given)
+      blocks.push({ block, checks })
+      for (const [k, { title, because }] of block.checks.entries()) {
+        if (because !== undefined && !checks.includes(k)) {
+          notExamined.push({ subBlock: block.id, title, reason: because })
+        }
+      }
     }
   }
   return { blocks, notExamined }

@@ -2,7 +2,7 @@ import type { Verdict } from './result.ts'
 
 /** Verdict of one check: pass from 1 + guard, tight from 1, fail below; unknown without a margin. */
 export function verdictOf(margin: number | null, guard: number): Verdict {
-  if (margin === null || Number.isNaN(margin)) return 'unknown'
+  if (margin === null || !Number.isFinite(margin)) return 'unknown'
   if (margin < 1) return 'fail'
   return margin < 1 + guard ? 'tight' : 'pass'
 }

@@ -64,6 +64,8 @@ export function nodeOf(nm: NodeClass): NodeValues {
       core,
       analogue: null,
       io: 1.8,
+      thick_limit: null,
+      thick_peak: null,
       tolerance: 0.05,
       device_limit: 1.1 * core,
       peak_limit: 2 * core,

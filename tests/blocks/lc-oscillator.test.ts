@@ -231,8 +231,8 @@ describe('checks of the LC oscillator', () => {
       lcOscillator.checks
         .filter((check) => check.asked === undefined || check.asked(given))
         .map(({ name }) => name)
-    expect(asked(at(28))).toEqual(['speed', 'headroom', 'tuning', 'start_up', 'range'])
-    expect(asked(at(28, { current: 4e-3 }))).toContain('peak_voltage')
+    expect(asked(at(28))).toEqual(['speed', 'headroom', 'tuning', 'start_up', 'peak_voltage', 'range'])
+    expect(asked(at(28, { amplitude: 0.4 }))).toContain('amplitude')
     expect(asked(caseOf(28, lc(), 'clock'))).not.toContain('range')
     expect(lcOscillator.asked(caseOf(28))).toEqual({
       yes: false,

@@ -63,6 +63,7 @@ const ALIASES: Readonly<Record<string, readonly string[]>> = {
   'jitter_budget.total': ['required'],
   power_budget: ['required'],
   'supply.device_limit': ['required'],
+  'supply.peak_limit': ['required'],
 }
 
 /** Inputs said to come from a key that only happens to have the same value. */

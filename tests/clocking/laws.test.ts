@@ -67,7 +67,9 @@ describe('LC oscillator', () => {
     const jitter = async (change: Record<string, string>): Promise<number> =>
       named(await caseOf(clockText(change)), 'clock.jitter.oscillator_rms_s')
     const base = await jitter(osc('cores: 1'))
-    expect(await jitter({ ...osc('cores: 1'), supply: '{tolerance: 0 %, lift: 100 mV}' })).toBeLessThan(base)
+    expect(await jitter({ ...osc('cores: 1'), supply: '{tolerance: 0 %, voltage: 0.7 V}' })).toBeGreaterThan(
+      base,
+    )
     expect(await jitter(osc('flicker_corner: 5 MHz'))).toBeGreaterThan(base)
     const low = {
       oscillator: '{kind: LC, range: [10 GHz, 10 GHz], tail_noise: 0, tank_q: 5}',
@@ -284,6 +286,28 @@ describe('budget', () => {
     const at = async (style: string): Promise<number> =>
       named(await caseOf(clockText({ clock: `{style: ${style}}` })), 'jitter.bounded_pp_s')
     expect(await at('CMOS')).toBeGreaterThan(3 * (await at('CML')))
+  })
+})
+
+describe('converter-based receivers', () => {
+  it("the clock's own jitter is judged as aperture jitter, unless the scenario states that", async () => {
+    const lane = (converter: string) =>
+      caseOf(
+        laneText({
+          loop: '{reference: 156.25 MHz}',
+          examine: '[loop, jitter, track_and_hold]',
+          receiver: `{kind: converter, converter: {${converter}}}`,
+        }),
+      )
+    const own = await lane('full_scale: 0.4 V')
+    const check = checkOf(own, 'loop.aperture')!
+    // −20 log10(2π f_N σ), f_N = 14 GHz.
+    const sigma = named(own, 'jitter.random_rms_s')
+    expect(check.available).toBeLessThanOrEqual(-20 * Math.log10(2 * Math.PI * 14e9 * sigma) + 1e-9)
+    expect(check.margin).toBeGreaterThan(0)
+    const stated = await lane('full_scale: 0.4 V, aperture_jitter: 80 fs')
+    expect(checkOf(stated, 'loop.aperture')).toBeUndefined()
+    expect(checkOf(stated, 'track_and_hold.aperture')?.margin).toBeGreaterThan(0)
   })
 })
 

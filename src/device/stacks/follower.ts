@@ -1,8 +1,15 @@
+import { formula } from '../../derivation/formula.ts'
 import type { DeviceHere } from '../conditions.ts'
 import { speedAt } from '../speed.ts'
 import { NO_LINE, type Stage } from '../stage.ts'
 import { gateVoltageAt } from '../voltage.ts'
 import { followerInput } from './lines.ts'
+
+/** V_S = V_tail + V_swing. V_tail [V], V_swing [V] → [V]. */
+export const raisedSource = formula(
+  { symbol: 'V_S', meaning: 'source of the follower at its highest input', unit: 'V', source: 'definition' },
+  (V_tail, V_swing) => V_tail + V_swing,
+)
 
 /** A source follower: device, tail voltage, full single-ended swing and reserve, all in V. */
 export interface Follower {
@@ -24,7 +31,11 @@ export function sourceFollower({ device, V_tail, V_swing, V_m }: Follower): Stag
     J_lim: device.J_lim,
     gainSwing: V_swing,
     ownSwing: V_swing,
-    supplyNeeded: (J, t) => t.calc(followerInput, gateVoltageAt(device, J, V_tail, t), V_tail, V_swing, V_m),
+    // At its highest input the source stands a full swing above the tail, and so does its body effect.
+    supplyNeeded: (J, t) => {
+      const V_S = t.calc(raisedSource, V_tail, V_swing)
+      return t.calc(followerInput, gateVoltageAt(device, J, V_S, t), V_tail, V_swing, V_m)
+    },
     bindingAt: () => 'follower',
     swingSpare: NO_LINE,
     ownSpare: NO_LINE,

@@ -18,7 +18,7 @@ export const linearSwing = formula(
   (V_sw0, V_lin, eta) => Math.max(V_sw0, V_lin / (2 * eta)),
 )
 
-/** V_pk = V_lin/(4 A): single-ended peak input. V_lin [V], A [1] → [V]. */
+/** V_pk = V_lin/(4 A): single-ended peak input, with the lowest gain that lifts a signal to V_lin. V_lin [V], A [1] → [V]. */
 export const peakInput = formula(
   { symbol: 'V_pk', meaning: 'single-ended peak input', unit: 'V', source: 'definition' },
   (V_lin, A) => V_lin / (4 * A),

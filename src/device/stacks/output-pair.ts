@@ -79,6 +79,7 @@ export function outputPair({ device, V_low, V_sw_in, A, V_m, V_tail, c_sat }: Ou
     swingSpare: (J) => V_sw_in - swing(J, PLAIN),
     ownSpare: NO_LINE,
     speed: (J, t) => speedAt(device, t.calc(halfDensity, J), t).f_T_int,
+    c_sat,
     givens: { V_low, V_sw: V_sw_in, A, V_m },
   }
 }

@@ -127,6 +127,7 @@ export function switchedPair(pair: SwitchedPair): Stage {
     swingSpare: (J) => V_sw - swing(J, PLAIN),
     ownSpare: pair.ownSaturation ? (J) => ownSpareAt(pair, J) : NO_LINE,
     speed: (J, t) => speedAt(device, t.calc(halfDensity, J), t).f_T_int,
+    c_sat: pair.c_sat,
     givens: { V_sw, A, V_m: pair.V_m },
   }
 }
