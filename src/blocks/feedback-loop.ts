@@ -75,17 +75,6 @@ export const unrolledLoopDemand = formula(
   (A, l, beta, kappa_int, UI) => ((A * l * Math.log(10)) / beta + kappa_int) / (2 * Math.PI * UI),
 )
 
-/** κ_int = 2πf_T τ: the regeneration of a current-mode latch in transit times of its device. f_T [Hz], tau [s] → [1]. */
-export const latchConstant = formula(
-  {
-    symbol: 'kappa_int',
-    meaning: 'regeneration time constant in transit times of the intrinsic device',
-    unit: '1',
-    source: 'definition',
-  },
-  (f_T, tau) => 2 * Math.PI * f_T * tau,
-)
-
 /**
  * Device speed [Hz] that the loop needs of a device whose layout share is c_lay [1] and whose latch regenerates with
  * κ_int [1]; without it, with that of a dynamic latch.

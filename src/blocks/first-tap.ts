@@ -1,19 +1,19 @@
 import { marginAtLeast } from '../derivation/margin.ts'
-import { PLAIN, type Trace } from '../derivation/trace.ts'
-import type { DeviceHere } from '../device/conditions.ts'
+import type { Trace } from '../derivation/trace.ts'
 import type { FixedBias } from '../device/fixed-bias.ts'
 import { gateCapacitanceOf } from '../device/speed.ts'
 import { halfDensity } from '../device/stacks/lines.ts'
-import { leastOn } from '../numeric/minimum.ts'
 import type { Bench, Case, StackSupply } from './bench.ts'
 import { designDensity, deviceResults } from './design-point.ts'
 import { latchBias } from './dynamic-latch.ts'
-import { dataSlicers, type LoopDemand, latchConstant, loopDemand } from './feedback-loop.ts'
-import { latchTimeAt, ONE_LATCH } from './flip-flop.ts'
+import { dataSlicers, type LoopDemand, loopDemand } from './feedback-loop.ts'
+import { latchConstant, ONE_LATCH } from './flip-flop.ts'
+import { type Latches, regenerationOutcome } from './latch-gain.ts'
+import { latchFactorOf, latchLoadAt } from './latch-load.ts'
 import { aboveClockPair, latchStack } from './latch-stack.ts'
 import { layoutShare, peakingFactor } from './load.ts'
 import { type Stacked, stackChecks } from './stack-checks.ts'
-import { combineRoutes, type Rule, ruleRoute, type StageSpeed, stageSpeed } from './stage-speed.ts'
+import { combineRoutes, type Rule, ruleRoute, stageSpeed } from './stage-speed.ts'
 import {
   ASKED,
   type CheckSpec,
@@ -24,9 +24,7 @@ import {
   type Unprepared,
 } from './sub-block.ts'
 
-interface CurrentModeLoop extends Stacked {
-  readonly device: DeviceHere
-}
+type CurrentModeLoop = Latches
 interface DynamicLoop {
   readonly bias: FixedBias
   readonly loop: LoopDemand
@@ -65,47 +63,17 @@ function currentModeLoop(
     settings.clock.gain,
     t,
   )
-  const latch = {
-    device,
-    V_sw: settings.headroom.latch_swing,
-    A: settings.clock.gain,
-    phi_o: t.leaf(ONE_LATCH, 1),
-  }
+  const V_sw = settings.headroom.latch_swing
+  const phi_o = t.leaf(ONE_LATCH, 1)
+  const beta = peakingFactor(settings.peaking.receive, t)
+  const k_latch = latchFactorOf(t)
   const demand = (J: number, trace: Trace): number => {
     const C_gg = gateCapacitanceOf(device, trace.calc(halfDensity, J), trace)
-    const c_lay = trace.calc(layoutShare, device.of.C_lay, C_gg)
-    const tau = latchTimeAt(latch, J, node.shares, trace)
-    if (tau === null) return Number.POSITIVE_INFINITY
-    return loop(c_lay, trace, trace.calc(latchConstant, stage.speed(J, trace), tau))
+    const load = latchLoadAt(device, node.shares, settings.clock.gain, phi_o, J, trace)
+    const kappa = trace.calc(latchConstant, load, k_latch, beta)
+    return loop(trace.calc(layoutShare, device.of.C_lay, C_gg), trace, kappa)
   }
-  const speed = atBestDensity(stageSpeed({ stage, V, rule, demand }, t), t)
-  return { speed, V_S: V_tail, V_high, V_off, device }
-}
-
-/**
- * The current per width at which speed over demand is largest: more current makes the devices faster, but takes
- * loop gain from the cross pair, so the fastest bias is not the best.
- */
-function atBestDensity(speed: StageSpeed, t: Trace): StageSpeed {
-  const { stage, capability: found, demand } = speed
-  if (found.J === null) return speed
-  const lacking = (x: number): number => {
-    const J = Math.exp(x)
-    return demand(J, PLAIN) / stage.speed(J, PLAIN)
-  }
-  const { x, atEnd } = leastOn(lacking, Math.log(stage.J_low), Math.log(found.J), 15, 1e-6)
-  if (atEnd === 'to') return speed
-  const J = t.search(BEST, Math.exp(x), t.recording ? stage.givens : undefined)
-  return { ...speed, capability: { ...found, J, binding: 'regeneration' } }
-}
-
-const BEST = {
-  symbol: 'J',
-  meaning: 'current per width at which the latch serves the loop best',
-  unit: 'A/m',
-  source: 'search over the current per width, up to what the stack allows',
-  residual: 'd(f_T_req/f_T)/dJ',
-  tolerance: '1e-6 in ln J',
+  return { speed: stageSpeed({ stage, V, rule, demand }, t), V_S: V_tail, V_high, V_off, device, V_sw }
 }
 
 function dynamicSpeed({ bias, loop, rule }: DynamicLoop, bench: Bench): Outcome {
@@ -131,6 +99,15 @@ const CHECKS: readonly CheckSpec<Loop>[] = [
     asked: (given: Case) => isCurrentMode(given) && (check.asked?.(given) ?? true),
     evaluate: (state: Loop, bench: Bench) => check.evaluate(state as Stacked, bench),
   })),
+  {
+    name: 'regeneration',
+    title: 'First feedback tap: regeneration',
+    quantity: 'loop gain of the cross-coupled pair',
+    unit: '1',
+    sense: 'at least',
+    asked: isCurrentMode,
+    evaluate: (state, bench) => regenerationOutcome(state as Latches, bench),
+  },
 ]
 
 function results(state: Loop, bench: Bench): readonly NamedResult[] {

@@ -1,19 +1,10 @@
 import { formula } from '../derivation/formula.ts'
 import type { Trace } from '../derivation/trace.ts'
 import type { DeviceHere } from '../device/conditions.ts'
-import { speedAt, transconductanceAt } from '../device/speed.ts'
-import { halfDensity } from '../device/stacks/lines.ts'
 import type { Bench, StackSupply } from './bench.ts'
 import { decisionSymbol } from './decision.ts'
 import { notedDesignDensity } from './design-point.ts'
-import {
-  CROSS_RATIO,
-  crossDensity,
-  crossGainAt,
-  latchDemand,
-  latchFactorOf,
-  latchLoadAt,
-} from './latch-load.ts'
+import { crossGainAt, latchDemand, latchFactorOf, latchLoadAt } from './latch-load.ts'
 import { latchStack } from './latch-stack.ts'
 import { peakingFactor } from './load.ts'
 import type { Stacked } from './stack-checks.ts'
@@ -84,43 +75,35 @@ export function flipFlop(
   }
 }
 
-/** τ = ℓ C_gg/(ρ g_mx (1 − 1/A_x)); without loop gain it never ends. l_latch [1], C_gg [F/m], rho_x [1], g_m [S/m] of the cross pair, A_cross [1] → [s]. */
-export const latchRegeneration = formula(
+/** κ_int = 2ℓ/(k β): a ring of two latches that divides f_in turns at ω = πf_in = 1/τ. l_latch [1], k_latch [1], beta [1] → [1]. */
+export const latchConstant = formula(
+  {
+    symbol: 'kappa_int',
+    meaning: 'time constant of a current-mode latch in transit times of its device',
+    unit: '1',
+    source: 'derived: the same latches divide f_in, so each turns the phase by a quarter at half of it',
+  },
+  (l_latch, k_latch, beta) => (2 * l_latch) / (k_latch * beta),
+)
+
+/** τ = κ_int/(2πf_T). kappa_int [1], f_T [Hz] → [s]. */
+export const latchTime = formula(
   {
     symbol: 'tau',
     meaning: 'regeneration time constant of a current-mode latch',
     unit: 's',
-    source: 'derived: C dv/dt = (g_m − 1/R) v at the cross-coupled pair',
+    source: 'definition',
   },
-  (l_latch, C_gg, rho_x, g_m, A_cross) => (l_latch * C_gg) / (rho_x * g_m * (1 - 1 / A_cross)),
+  (kappa_int, f_T) => kappa_int / (2 * Math.PI * f_T),
 )
-
-/** What the regeneration of a latch depends on beside its current per width. SI. */
-export interface LatchBody {
-  readonly device: DeviceHere
-  readonly V_sw: number
-  readonly A: number
-  readonly phi_o: number
-}
-
-/** Regeneration time constant [s] at current per width J [A/m]; null without loop gain. */
-export function latchTimeAt(
-  { device, V_sw, A, phi_o }: LatchBody,
-  J: number,
-  shares: Bench['node']['shares'],
-  t: Trace,
-): number | null {
-  const A_cross = crossGainAt(device, J, V_sw, t)
-  if (A_cross <= 1) return null
-  const rho_x = t.leaf(CROSS_RATIO, CROSS_RATIO.value)
-  const g_m = transconductanceAt(device, t.calc(crossDensity, J, rho_x), t)
-  const { C_gg } = speedAt(device, t.calc(halfDensity, J), t)
-  return t.calc(latchRegeneration, latchLoadAt(device, shares, A, phi_o, J, t), C_gg, rho_x, g_m, A_cross)
-}
 
 /** Regeneration time constant [s] at the design point; null without an operating point or loop gain. */
 export function flipFlopTime(state: FlipFlop, bench: Bench): number | null {
-  const { t, node, guard } = bench
-  const J = notedDesignDensity(state.speed, guard, t)
-  return J === null ? null : latchTimeAt(state, J, node.shares, t)
+  const { speed, device, V_sw, A, phi_o } = state
+  const { t, node, guard, settings } = bench
+  const J = notedDesignDensity(speed, guard, t)
+  if (J === null || crossGainAt(device, J, V_sw, t) <= 1) return null
+  const load = latchLoadAt(device, node.shares, A, phi_o, J, t)
+  const beta = peakingFactor(settings.peaking.receive, t)
+  return t.calc(latchTime, t.calc(latchConstant, load, latchFactorOf(t), beta), speed.stage.speed(J, t))
 }

@@ -12,7 +12,6 @@ export type Line =
   | 'input'
   | 'start-up voltage'
   | 'follower'
-  | 'regeneration'
 
 /**
  * A stage with a bias current per width J to choose. Supply lines say how many volts J costs; the other lines

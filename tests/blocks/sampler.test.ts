@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { growth, regenerationTime, undecided } from '../../src/blocks/decision.ts'
 import { divider } from '../../src/blocks/divider.ts'
 import { dynamicLatchDemand, latchNoise, pairOffset } from '../../src/blocks/dynamic-latch.ts'
-import { latchRegeneration } from '../../src/blocks/flip-flop.ts'
+import { latchConstant, latchTime } from '../../src/blocks/flip-flop.ts'
 import { sampler } from '../../src/blocks/sampler.ts'
 import { caseOf, nodeOf, type Overrides, outcomeOf, resultsOf, walkAll, worstMargin } from './bench.ts'
 
@@ -43,9 +43,11 @@ describe('regeneration', () => {
     expect(latchNoise.run(1e-3, 10e-15, 40e-15)).toBeCloseTo(0.5e-3, 15)
   })
 
-  it('independent: an RC pair with loop gain A grows with τ = RC/(A − 1)', () => {
-    const [R, C, A] = [200, 2e-14, 3]
-    expect(latchRegeneration.run(1, C, 1, A / R, A)).toBeCloseTo((R * C) / (A - 1), 20)
+  it('independent: a ring of two latches that divides f_in oscillates at half of it, where each turns by a quarter', () => {
+    // Two integrators of time constant τ in an inverting ring: ω = 1/τ; the ring divides f_in = 2 ω/2π.
+    const [l, k, f_T] = [4.5, 1.32, 60e9]
+    const f_in = (k * f_T) / l
+    expect(latchTime.run(latchConstant.run(l, k, 1), f_T) * 2 * Math.PI * (f_in / 2)).toBeCloseTo(1, 12)
   })
 })
 
