@@ -8,7 +8,8 @@ import type { Bench } from './bench.ts'
 const PROAKIS = 'J. G. Proakis, Digital Communications, 4th edition 2001, 5.2-45'
 const CONVERTER = 'IEEE Std 1241-2010'
 
-const LEVELS = {
+/** Levels of the modulation, as a leaf of derivations. */
+export const LEVELS = {
   symbol: 'M',
   meaning: 'levels of the modulation',
   unit: '1',

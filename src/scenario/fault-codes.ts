@@ -42,6 +42,7 @@ export const FAULT_CODES = {
   'source.missing': 'A node value states no source.',
   'rule.form': 'A rule formula is not plain arithmetic over the documented symbols.',
   'oscillator.missing': 'A clock block needs an oscillator.',
+  'noise.twice': 'Input noise is given by its density or by a noise figure, not by both.',
   'channel.incomplete': 'A channel needs a loss and its frequency, or a file.',
   'jitter.incomplete': 'A jitter budget needs a preset or at least one allowance.',
   'jitter.preset-block': 'A preset is for the other kind of block.',

@@ -57,6 +57,19 @@ const channelIsComplete: Rule = ({ channel }, _block, { has, placeOf }) =>
         ),
       ]
 
+const noiseIsOne: Rule = (_settings, _block, { has, placeOf }) =>
+  has('noise.density') && has('noise.figure')
+    ? [
+        faultAt(
+          placeOf('noise'),
+          'noise.twice',
+          'a noise density beside a noise figure',
+          'one of them',
+          'keep the one that was measured or specified',
+        ),
+      ]
+    : []
+
 const INTERVALS = ['random_ui', 'bounded_ui', 'total_ui', 'even_odd_ui'] as const
 const ALLOWANCES = ['preset', 'random', 'bounded', 'total', 'even_odd', ...INTERVALS]
 
@@ -198,6 +211,7 @@ const RULES: readonly Rule[] = [
   linkIsComplete,
   clockHasOscillator,
   channelIsComplete,
+  noiseIsOne,
   jitterIsComplete,
   presetFitsBlock,
   clockHasNoInterval,

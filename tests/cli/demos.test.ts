@@ -62,6 +62,9 @@ const ALIASES: Readonly<Record<string, readonly string[]>> = {
   'jitter_budget.bounded': ['required'],
   'jitter_budget.total': ['required'],
   power_budget: ['required'],
+  'fec.target': ['required'],
+  'channel.loss': ['IL_at'],
+  'channel.at': ['f_at'],
   'supply.device_limit': ['required'],
   'supply.peak_limit': ['required'],
 }

@@ -154,6 +154,7 @@ const PROVOKED: readonly Provoked[] = [
   ['rule.form', 'an assignment', link({ demand: '{formulas: {driver: §"k = 3"}}' })],
   ['oscillator.missing', 'in a clock block', 'format: 1\ntitle: A clock\nblock: §clock\nnodes: [P28]\n'],
   ['channel.incomplete', 'a loss without frequency', link({ channel: '§{loss: 20 dB}' })],
+  ['noise.twice', 'a density and a figure', link({ noise: '§{density: 1e-17 V^2/Hz, figure: 10 dB}' })],
   ['jitter.incomplete', 'no allowance', link({ jitter_budget: '§{}' })],
   ['jitter.preset-block', "a lane's in a clock block", clock('jitter_budget: §{preset: ieee-802.3ck-kr}')],
   [

@@ -13,7 +13,7 @@ export interface Folded {
 }
 
 /** Steps of the Nyquist band. */
-const STEPS = 512
+const STEPS = 256
 
 /**
  * Folds a received pulse and white noise into the Nyquist band.

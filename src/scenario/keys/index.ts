@@ -112,7 +112,7 @@ export const optionKeys = {
     min: 1e-30,
     max: 0.1,
     uncertain: false,
-    usedBy: ['sampler', 'track_and_hold', 'link', 'jitter'],
+    usedBy: ['sampler', 'track_and_hold', 'channel', 'fec', 'jitter'],
   }),
   process: group('Corner, temperature and ageing.', {
     corner: choice(['worst', 'slow', 'typical', 'fast'], {

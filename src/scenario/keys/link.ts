@@ -19,7 +19,7 @@ export const transmitter = group('The transmitter: driver, multiplexer and what 
     max: 3,
     default: '0.8 V',
     source: 'common practice, no source: the usual 800 mV of electrical lane interfaces',
-    usedBy: ['driver', 'transmit_pad'],
+    usedBy: ['driver', 'transmit_pad', 'channel'],
   }),
   termination: quantity({
     meaning: 'Single-ended termination resistance at each end.',
@@ -30,7 +30,7 @@ export const transmitter = group('The transmitter: driver, multiplexer and what 
     max: 200,
     default: '50 Ω',
     source: COMMON,
-    usedBy: ['driver', 'transmit_pad', 'receive_pad'],
+    usedBy: ['driver', 'transmit_pad', 'receive_pad', 'channel'],
   }),
   termination_tolerance: quantity({
     meaning: 'Tolerance of the on-chip termination after trimming.',
@@ -438,7 +438,7 @@ export const channel = section('The channel, ball to ball. Writing it asks for t
     unit: 'dB',
     min: 0,
     max: 80,
-    usedBy: ['link'],
+    usedBy: ['channel'],
   }),
   at: quantity({
     meaning: 'Frequency of the loss figure.',
@@ -447,17 +447,18 @@ export const channel = section('The channel, ball to ball. Writing it asks for t
     shown: 'GHz',
     min: 1e6,
     max: 2e11,
-    usedBy: ['link'],
+    usedBy: ['channel'],
   }),
   skin_share: quantity({
     meaning:
       'Share of the loss, in dB, that grows with the root of frequency; the rest grows with frequency.',
+    symbol: 's_skin',
     unit: '1',
     min: 0,
     max: 1,
     default: '0.5',
     source: COMMON,
-    usedBy: ['link'],
+    usedBy: ['channel'],
   }),
   file: text({
     meaning: 'Touchstone file (.s2p, .s4p) of the channel.',
@@ -482,7 +483,7 @@ export const channel = section('The channel, ball to ball. Writing it asks for t
 })
 
 /** Noise of the receiver input. */
-export const noise = section('Receiver input noise.', {
+export const noise = group('Receiver input noise: its density, or the noise figure that gives it.', {
   density: quantity({
     meaning: 'Input-referred noise power density.',
     symbol: 'eta_0',
@@ -490,7 +491,7 @@ export const noise = section('Receiver input noise.', {
     shown: 'V²/GHz',
     min: 1e-20,
     max: 1e-12,
-    usedBy: ['link'],
+    usedBy: ['channel'],
   }),
   figure: quantity({
     meaning: 'Noise figure of the receiver front end.',
@@ -498,13 +499,26 @@ export const noise = section('Receiver input noise.', {
     unit: 'dB',
     min: 0,
     max: 30,
-    usedBy: ['link'],
+    default: '10 dB',
+    source: COMMON,
+    usedBy: ['channel'],
   }),
 })
 
 /** Error-correcting code on the lane. */
 export const fec = section('Forward error correction.', {
-  code: choice(['RS(544,514)', 'RS(528,514)'], { meaning: 'The code.', required: true, usedBy: ['link'] }),
+  code: choice(['RS(544,514)', 'RS(528,514)'], { meaning: 'The code.', required: true, usedBy: ['fec'] }),
+  target: quantity({
+    meaning: 'Largest allowed codeword error ratio.',
+    symbol: 'p_target',
+    unit: '1',
+    min: 1e-60,
+    max: 0.1,
+    default: '1e-12',
+    source: COMMON,
+    uncertain: false,
+    usedBy: ['fec'],
+  }),
 })
 
 /** Which parts of the block the scenario asks about. */
@@ -529,6 +543,8 @@ export const examine = list({
     'loop',
     'jitter',
     'power',
+    'channel',
+    'fec',
   ],
   longest: 24,
 })
