@@ -65,7 +65,7 @@ const evaluate =
       const reason = `the limit is UNSURE and decides nothing: against it the margin would be ${margin.toFixed(2)}; read the standard and state the allowance`
       return { required: limit, available: actual, margin: null, basis, reason }
     }
-    const need = quantity === 'random' && margin < 1 ? whatItTakes(state, limit, bench) : undefined
+    const need = quantity === 'random' && margin < 1 ? whatItTakes(state, actual, limit, bench) : undefined
     return {
       required: limit,
       available: actual,
@@ -81,6 +81,9 @@ const check = (quantity: Quantity, title: string, what: string): CheckSpec<State
   quantity: what,
   unit: 's',
   sense: 'at most',
+  ...(quantity === 'even_odd'
+    ? { because: 'no allowance for it is stated, or the clock has one phase' }
+    : {}),
   asked: (given) => isAllowed(given, quantity),
   evaluate: evaluate(quantity),
 })

@@ -19,12 +19,13 @@ const CALLED = {
  * its share would fit with everything else unchanged.
  */
 export function whatItTakes(
-  { loop, path, sigma_all }: BudgetLines,
+  { loop, path }: BudgetLines,
+  sigma: number,
   limit: number,
   { settings }: Bench,
 ): string {
   const largest = SOURCE_NAMES.reduce((most, one) => (loop.judged[one] > loop.judged[most] ? one : most))
-  const others = sigma_all ** 2 - loop.judged.oscillator ** 2
+  const others = sigma ** 2 - loop.judged.oscillator ** 2
   if (path.sigma > loop.judged[largest]) return 'the clock path makes most of it'
   if (largest !== 'oscillator') return `${CALLED[largest]} makes most of it`
   const room = limit ** 2 - others

@@ -10,7 +10,7 @@ import {
   type Unprepared,
 } from '../blocks/sub-block.ts'
 import { apertureAgainst } from '../blocks/track-and-hold.ts'
-import { marginAtMost } from '../derivation/margin.ts'
+import { marginAtLeast, marginAtMost } from '../derivation/margin.ts'
 import { PLAIN } from '../derivation/trace.ts'
 import { quantile } from './budget/allowances.ts'
 import { totalJitter } from './budget/dual-dirac.ts'
@@ -19,7 +19,7 @@ import { ceilingOutcome } from './ceiling.ts'
 import { type ClockLoop, clockLoopAt, type NoLoop } from './loop/clock-loop.ts'
 import { filterPartsOf } from './loop/filter-parts.ts'
 import { flatnessOf } from './loop/flatness.ts'
-import { lockTimeOf } from './loop/lock.ts'
+import { bandwidthToLock, type LockTime, lockTimeOf, lockTimesOf } from './loop/lock.ts'
 import { delayedMargin, FULL_TURN } from './loop/shape.ts'
 import { levelOf, spectrumOf } from './loop/spectrum.ts'
 import { peakingOf } from './loop/transfer.ts'
@@ -46,15 +46,50 @@ function bandwidthOutcome({ f_c, f_lim, atLimit }: ClockLoop, { t }: Bench): Out
   return { required: f_lim, available: f_c, margin, basis, ...(reason === undefined ? {} : { reason }) }
 }
 
+const LEAST_MARGIN = {
+  symbol: 'phi_least',
+  meaning: 'least phase margin that a loop is built with',
+  unit: 'deg',
+  source: 'common practice, no source: 30° leaves 6 dB of peaking',
+  value: 30,
+}
+
+/** What the delay of sampling leaves of the phase margin. */
+function marginOutcome({ f_c, problem }: ClockLoop, { t, settings }: Bench): Outcome {
+  const phi_T = t.leaf(FULL_TURN, FULL_TURN.value)
+  const available = t.calc(delayedMargin, settings.loop!.phase_margin, f_c, problem.f_ref, phi_T)
+  const required = t.leaf(LEAST_MARGIN, LEAST_MARGIN.value)
+  return {
+    required,
+    available,
+    margin: t.calc(marginAtLeast, available, required),
+    basis: 'designed phase margin less half a reference period of delay',
+  }
+}
+
 function lockOutcome(loop: ClockLoop, bench: Bench): Outcome {
   const limit = bench.settings.loop!.lock_time!
-  const actual = lockTimeOf(loop, bench)
+  const times = lockTimesOf(loop, bench)
+  const margin = bench.t.calc(marginAtMost, limit, times.total)
   return {
     required: limit,
-    available: actual,
-    margin: bench.t.calc(marginAtMost, limit, actual),
+    available: times.total,
+    margin,
     basis: 'estimate: search among bands, charging of the filter, settling',
+    ...(margin < 1 + bench.guard ? { reason: inTime(times, loop, limit) } : {}),
   }
+}
+
+/** What bandwidth would lock in time, in words. */
+function inTime(times: LockTime, { f_c, f_lim, atLimit }: ClockLoop, limit: number): string {
+  if (f_lim === null) return 'the reference sets the bandwidth: a faster one locks sooner'
+  const needed = bandwidthToLock(times, f_c, limit)
+  if (needed === null)
+    return 'the search among bands alone takes that long: fewer bands or a faster reference'
+  const chosen = atLimit === false ? 'the bandwidth is the one of least jitter; ' : ''
+  const text = `${(needed / 1e6).toPrecision(3)} MHz`
+  if (needed > f_lim) return `${chosen}to lock in time takes ${text}, beyond what is stable`
+  return `${chosen}${text} locks in time: state it as \`loop.bandwidth\` to see what it costs in jitter`
 }
 
 /** All random jitter of the sampling clock against what the converter may have. */
@@ -76,6 +111,15 @@ const CHECKS: readonly CheckSpec<State>[] = [
     sense: 'at most',
     asked: ({ settings }) => settings.loop?.kind !== 'realigned',
     evaluate: judged(bandwidthOutcome),
+  },
+  {
+    name: 'phase_margin',
+    title: 'Loop: phase margin left by sampling',
+    quantity: 'phase margin',
+    unit: 'deg',
+    sense: 'at least',
+    asked: ({ settings }) => settings.loop?.kind !== 'realigned',
+    evaluate: judged(marginOutcome),
   },
   {
     name: 'lock_time',
@@ -148,7 +192,7 @@ function loopValues(loop: ClockLoop, bench: Bench): Values {
       'clock.loop.double_bandwidth_jitter_s',
       flat?.sigma_double ?? null,
       's',
-      'the reference gives the bandwidth',
+      flat === null ? 'the reference gives the bandwidth' : 'at twice the bandwidth the loop is not stable',
     ],
     ['clock.loop.peaking_dB', peakingOf({ kind, f_c, r, f_ref: sampled ? f_ref : null }), 'dB'],
     [

@@ -24,10 +24,15 @@ export interface ClockingShown {
     readonly freeRunning_dBc_Hz: readonly number[]
     readonly sources: readonly NoiseCurve[]
   }
-  /** Random jitter, rms, by line, as it counts: behind a receiver that tracks where there is one. */
+  /**
+   * Random jitter, rms, by line, as it counts: behind a receiver that tracks where there is one, and without the
+   * receiver's own lines where every allowance is one of a transmitter.
+   */
   readonly random: readonly BudgetLine[]
   /** Bounded jitter, peak to peak, by line. */
   readonly bounded: readonly BudgetLine[]
+  /** Lines of the receiver that no allowance counts. */
+  readonly leftOut: readonly string[]
   readonly randomSum_s: number
   readonly boundedSum_s: number
   /** At the error ratio; null when the scenario states none. */
@@ -53,9 +58,10 @@ export interface BudgetLine {
   readonly id: string
   readonly label: string
   readonly value_s: number
-  /** Whether only the receiver has it. */
-  readonly receiverOnly: boolean
 }
+
+/** A line, and whether only the receiver has it. */
+type Line = BudgetLine & { readonly receiverOnly: boolean }
 
 const LABELS: Readonly<Record<SourceName, string>> = {
   reference: 'reference',
@@ -94,8 +100,15 @@ function shownOf(lines: BudgetLines, bench: Bench): ClockingShown {
   const { settings, rates } = bench
   const { band, reference } = settings.loop!
   const { sources, f_c, f_CDR } = loop
-  const random = randomLines(lines, bench)
   const { error_ratio } = settings
+  const allowances = QUANTITIES.filter((one) => isAllowed(bench, one)).map((quantity) => ({
+    quantity,
+    ...allowanceOf(bench, quantity),
+  }))
+  const sent = allowances.length > 0 && allowances.every(({ counts }) => counts === 'transmitter')
+  const counted = ({ receiverOnly }: Line): boolean => !(sent && receiverOnly)
+  const [random, bounded] = [randomLines(lines, bench), boundedLines(lines)]
+  const [randomSum, boundedSum] = sent ? [lines.sigma_tx, lines.DJ_tx] : [lines.sigma_all, lines.DJ_all]
   return {
     frequency_Hz: sources.oscillator.f_0,
     multiplication: sources.N,
@@ -106,23 +119,23 @@ function shownOf(lines: BudgetLines, bench: Bench): ClockingShown {
     band_Hz: band,
     tracking_Hz: f_CDR,
     phaseNoise: curves(lines, band),
-    random,
-    bounded: boundedLines(lines),
-    randomSum_s: lines.sigma_all,
-    boundedSum_s: lines.DJ_all,
+    random: random.filter(counted).map(plain),
+    bounded: bounded.filter(counted).map(plain),
+    leftOut: [...random, ...bounded].filter((one) => !counted(one)).map(({ label }) => label),
+    randomSum_s: randomSum,
+    boundedSum_s: boundedSum,
     total_s:
       error_ratio === null
         ? null
-        : lines.DJ_all + 2 * quantile(error_ratio, 'this scenario', PLAIN) * lines.sigma_all,
+        : boundedSum + 2 * quantile(error_ratio, 'this scenario', PLAIN) * randomSum,
     errorRatio: error_ratio,
     UI_s: rates.UI,
-    allowances: QUANTITIES.filter((one) => isAllowed(bench, one)).map((quantity) => {
-      const { limit, sure } = allowanceOf(bench, quantity)
-      return { quantity, limit_s: limit, sure }
-    }),
-    largest: largestOf(random, lines.sigma_all),
+    allowances: allowances.map(({ quantity, limit, sure }) => ({ quantity, limit_s: limit, sure })),
+    largest: largestOf(random.filter(counted), randomSum),
   }
 }
+
+const plain = ({ id, label, value_s }: Line): BudgetLine => ({ id, label, value_s })
 
 const QUANTITIES: readonly Quantity[] = ['random', 'bounded', 'total', 'even_odd', 'rms', 'tail']
 
@@ -152,8 +165,8 @@ function curves({ loop }: BudgetLines, [f_1, f_2]: readonly [number, number]): C
 /** Below any noise that matters; in place of the logarithm of nothing. */
 const FLOOR = -300
 
-function randomLines({ loop, path }: BudgetLines, { block, settings }: Bench): readonly BudgetLine[] {
-  const line = (id: string, label: string, value_s: number, receiverOnly = false): BudgetLine => ({
+function randomLines({ loop, path }: BudgetLines, { block, settings }: Bench): readonly Line[] {
+  const line = (id: string, label: string, value_s: number, receiverOnly = false): Line => ({
     id,
     label,
     value_s,
@@ -166,7 +179,7 @@ function randomLines({ loop, path }: BudgetLines, { block, settings }: Bench): r
   ].filter(({ value_s }) => value_s > 0)
 }
 
-function boundedLines({ J_supply, J_driver, J_spur, J_tone, J_rec }: BudgetLines): readonly BudgetLine[] {
+function boundedLines({ J_supply, J_driver, J_spur, J_tone, J_rec }: BudgetLines): readonly Line[] {
   const all = [
     ['ripple', 'ripple on the clock path', J_supply, false],
     ['driver', 'ripple on the driver', J_driver, false],

@@ -51,9 +51,11 @@ export class KnownLeaves {
     return mostFitting(own, purpose) ?? this.#below?.named(symbol, value, purpose)
   }
 
-  /** Any leaf of this value, rather one that is used for the purpose. */
-  alike(value: number, purpose: string): KnownLeaf | undefined {
-    return mostFitting(this.#byValue.get(value) ?? [], purpose) ?? this.#below?.alike(value, purpose)
+  /** Any leaf of this value, of this unit if one is named, rather one that is used for the purpose. */
+  alike(value: number, purpose: string, unit?: string): KnownLeaf | undefined {
+    const own = this.#byValue.get(value) ?? []
+    const fitting = unit === undefined ? own : own.filter((leaf) => leaf.unit === unit)
+    return mostFitting(fitting, purpose) ?? this.#below?.alike(value, purpose, unit)
   }
 }
 
@@ -150,14 +152,23 @@ export class Recorder implements Trace {
     else known.push(this.#find('', value))
   }
 
-  /** Where the step with this value stands; prefers one of the same symbol, then the latest. */
-  #find(parameter: string, value: number): number {
+  /**
+   * Where the step with this value stands; prefers one of the same symbol, then one of the unit if that is known, then
+   * the latest.
+   */
+  #find(parameter: string, value: number, unit?: string): number {
     const name = this.#aliases.get(parameter) ?? parameter
     const places = this.#places.get(value) ?? []
     const ofSymbol = places.findLast((k) => this.#drafts[k]!.symbol === name)
     if (ofSymbol !== undefined) return ofSymbol
     const named = this.#known.named(name, value, this.#purpose)
     if (named !== undefined) return this.#adopt(named)
+    if (unit !== undefined) {
+      const ofUnit = places.findLast((k) => this.#drafts[k]!.unit === unit)
+      if (ofUnit !== undefined) return ofUnit
+      const leaf = this.#known.alike(value, this.#purpose, unit)
+      if (leaf !== undefined) return this.#adopt(leaf)
+    }
     const latest = places.at(-1)
     if (latest !== undefined) return latest
     const alike = this.#known.alike(value, this.#purpose)
@@ -175,11 +186,23 @@ export class Recorder implements Trace {
     const places = this.#places.get(draft.value)
     if (places?.some((k) => same(this.#drafts[k]!, draft, inputs))) return
     const from: Record<string, number> = {}
-    for (const [name, value] of Object.entries(inputs)) from[name] = this.#find(name, value)
+    for (const [name, value] of Object.entries(inputs)) {
+      // What is compared has one unit: it tells apart numbers that are equal by chance.
+      const other = name === 'required' || name === 'available' ? this.#comparedUnit(name, inputs) : undefined
+      from[name] = this.#find(name, value, other)
+    }
     const place = this.#drafts.push({ ...draft, inputs: { ...inputs }, from }) - 1
     const alike = this.#places.get(draft.value)
     if (alike === undefined) this.#places.set(draft.value, [place])
     else alike.push(place)
+  }
+
+  /** Unit of the other side of a comparison, when that was computed: the latest step of its value. */
+  #comparedUnit(name: string, inputs: Readonly<Record<string, number>>): string | undefined {
+    const other = inputs[name === 'required' ? 'available' : 'required']
+    const places = other === undefined ? undefined : this.#places.get(other)
+    const computed = places?.findLast((k) => this.#drafts[k]!.kind !== 'leaf')
+    return computed === undefined ? undefined : this.#drafts[computed]!.unit
   }
 
   /**
@@ -193,8 +216,12 @@ export class Recorder implements Trace {
     alsoShown: readonly number[] = [],
   ): readonly Step[] {
     const ends = new Map<number, NonNullable<Step['yields']>>()
+    // What the margin compared is what is marked.
+    const compared = margin === null ? undefined : this.#drafts[this.#find('margin', margin)]
     const mark = (value: number | null, role: NonNullable<Step['yields']>): void => {
-      if (value !== null) ends.set(this.#find(role, value), role)
+      if (value === null) return
+      const from = compared?.inputs[role] === value ? compared.from[role] : undefined
+      ends.set(from ?? this.#find(role, value), role)
     }
     mark(required, 'required')
     mark(available, 'available')

@@ -15,7 +15,13 @@ export interface Provenance {
   readonly path: string
   readonly symbol: string
   readonly meaning: string
-  readonly value: number | string | readonly number[] | readonly string[] | null
+  readonly value:
+    | number
+    | string
+    | readonly number[]
+    | readonly string[]
+    | readonly (readonly number[])[]
+    | null
   readonly unit: string
   readonly shown?: string
   readonly source: string

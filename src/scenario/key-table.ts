@@ -49,7 +49,7 @@ function whatOf(key: Key): string {
     case 'table':
       return 'numbers by name'
     case 'rows':
-      return `rows of [${key.columns.map(({ name, unit }) => `${name} in ${unit}`).join(', ')}]`
+      return `rows of [${key.columns.map(({ name, unit }) => `${name} with its unit (${unit})`).join(', ')}]`
     case 'group':
       return 'group of keys'
     case 'section':

@@ -154,7 +154,7 @@ export function readRows(
   path: string,
   reading: Reading,
 ): Read<readonly (readonly number[])[]> | null {
-  const due = `rows of [${key.columns.map(({ name, unit }) => `${name} in ${unit}`).join(', ')}]`
+  const due = `rows of [${key.columns.map(({ name, unit }) => `${name} with its unit (${unit})`).join(', ')}]`
   if (tree.kind !== 'list' || tree.items.length === 0) {
     reading.faults.push(
       faultAt(tree.place, 'rows.form', inWords(tree), due, `write a list of rows for \`${path}\``),

@@ -143,19 +143,24 @@ const OF_LINKS = [
   'fec',
 ] as const
 
+/** A clock block has one phase, whose even and odd edges it does not tell apart. */
+const ONE_PHASE = ['jitter_budget.even_odd', 'jitter_budget.even_odd_ui'] as const
+
 /** Keys that say nothing about a clock would be ignored: better said than silently so. */
 const clockHasNoLane: Rule = (_settings, block, { has, placeOf }) =>
   block !== 'clock'
     ? []
-    : OF_LINKS.filter(has).map((key) =>
-        faultAt(
-          placeOf(key),
-          'key.other-block',
-          `\`${key}\` in a clock block`,
-          'keys of the clock: oscillator, divider, clock, loop, jitter_budget, power_budget and what all blocks have',
-          'remove it, or write `block: link`',
-        ),
-      )
+    : [...OF_LINKS, ...ONE_PHASE]
+        .filter(has)
+        .map((key) =>
+          faultAt(
+            placeOf(key.split('.')[0]!),
+            'key.other-block',
+            `\`${key}\` in a clock block`,
+            'keys of the clock: oscillator, divider, clock, loop, jitter_budget, power_budget and what all blocks have',
+            'remove it, or write `block: link`',
+          ),
+        )
 
 /** Least ratio of the ends of a band of integration. */
 const NARROWEST = 2

@@ -82,7 +82,13 @@ export type Origin = 'scenario' | 'node' | 'default'
 export interface Assumption {
   /** For instance `oscillator.bank_q`, `options.nrz-56.clocking`, `nodes.P28.nmos.mu0`. */
   readonly path: string
-  readonly value: number | string | readonly number[] | readonly string[] | null
+  readonly value:
+    | number
+    | string
+    | readonly number[]
+    | readonly string[]
+    | readonly (readonly number[])[]
+    | null
   /** Stated spread of an uncertain value, in the same unit. */
   readonly low?: number
   readonly high?: number

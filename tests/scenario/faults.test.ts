@@ -163,6 +163,7 @@ const PROVOKED: readonly Provoked[] = [
     link({ jitter_budget: '§{preset: pcie-refclk-16g}' }),
   ],
   ['key.other-block', "a lane's key in a clock block", clock('modulation: §PAM-4')],
+  ['key.other-block', 'even-odd jitter of one phase', clock('jitter_budget: §{even_odd: 1 ps}')],
   ['jitter.unit-interval', 'random jitter in UI', clock('jitter_budget: §{random: 0.01 UI}')],
   ['loop.oscillator', 'in a lane', link({ loop: '§{reference: 100 MHz}' })],
   ['loop.band', 'too narrow', clock('loop: §{reference: 100 MHz, band: [1 MHz, 1.5 MHz]}')],

@@ -156,8 +156,20 @@ function toneAt({ t, settings }: Bench, loop: ClockLoop): number | null {
     ...(kind === 'type-II' ? { r_b: r, f_ref } : {}),
   })
   const { K_push, oscillator } = loop.sources
-  return t.calc(toneJitter, K_push, tone.amplitude, E_m, tone.frequency, oscillator.f_0)
+  const seen = t.calc(toneJitter, K_push, tone.amplitude, E_m, tone.frequency, oscillator.f_0)
+  return loop.f_CDR === null ? seen : t.calc(trackedTone, seen, tone.frequency, loop.f_CDR)
 }
+
+/** J = J_seen f_m/√(f_m² + f_CDR²): what a receiver that follows slow jitter is left with. J_seen [s], f_m [Hz], f_CDR [Hz] → [s]. */
+export const trackedTone = formula(
+  {
+    symbol: 'J_tone',
+    meaning: 'jitter of the tone on the supply behind the tracking receiver, peak to peak',
+    unit: 's',
+    source: 'circuit theory: high-pass of first order',
+  },
+  (J_seen, f_m, f_CDR) => (J_seen * f_m) / Math.sqrt(f_m ** 2 + f_CDR ** 2),
+)
 
 const TRANSFER = {
   symbol: 'E_m',

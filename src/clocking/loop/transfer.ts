@@ -4,7 +4,10 @@
  * Type II, third order, filter of C1 beside R and C2 in series: with the zero at f_c/√b and the pole at f_c √b, where
  * the phase margin is largest, and |T| = 1 at f_c,
  *   T = −(1 + j u √b)/(√b u² (1 + j u/√b)),  u = f/f_c.
- * Sampling delays it by half a reference period. A realigned or injection-locked oscillator is a loop of first order.
+ * Sampling delays it by half a reference period. An oscillator realigned at every edge of its reference forgets what it
+ * gathered since the last one: averaged over the period, x = 2πf/f_ref, |1 − H|² = 2(1 − sin x/x), and the reference
+ * passes with the area of sinc²(f/f_ref), f_ref/2, here of first order with its corner at f_ref/π. With no sampling
+ * frequency it is a plain loop of first order.
  *
  * Source: F. M. Gardner, IEEE Trans. Commun. 28(11), 1980, and Phaselock Techniques, 3rd ed., 2005; C. S. Vaucher,
  * Architectures for RF Frequency Synthesizers, 2002.
@@ -16,7 +19,7 @@ export interface LoopShape {
   readonly f_c: number
   /** √b, the root of pole over zero [1]. Not used by a loop of first order. */
   readonly r: number
-  /** Sampling frequency whose half period delays the loop [Hz]; null for none. */
+  /** Sampling frequency [Hz]: its half period delays the loop, its edges realign the oscillator; null for none. */
   readonly f_ref: number | null
 }
 
@@ -36,8 +39,10 @@ export interface ClosedLoop {
 export function closedLoopOver(f: ArrayLike<number>, shape: LoopShape): ClosedLoop {
   const low = new Float64Array(f.length)
   const high = new Float64Array(f.length)
-  if (shape.kind === 'realigned') firstOrder(f, shape.f_c, low, high)
-  else thirdOrder(f, shape, low, high)
+  if (shape.kind === 'realigned') {
+    firstOrder(f, shape.f_ref === null ? shape.f_c : shape.f_ref / Math.PI, low, high)
+    if (shape.f_ref !== null) realigned(f, shape.f_ref, high)
+  } else thirdOrder(f, shape, low, high)
   return { low, high }
 }
 
@@ -46,6 +51,15 @@ function firstOrder(f: ArrayLike<number>, f_c: number, low: Float64Array, high: 
     const x = (f[k]! / f_c) ** 2
     low[k] = 1 / (1 + x)
     high[k] = x / (1 + x)
+  }
+}
+
+/** What is left of an oscillator's own noise between edges that set its phase, averaged over the period. */
+function realigned(f: ArrayLike<number>, f_ref: number, high: Float64Array): void {
+  for (let k = 0; k < f.length; k++) {
+    const x = (2 * Math.PI * f[k]!) / f_ref
+    // Below, the series: 1 − sin x/x cancels.
+    high[k] = x < 1e-2 ? (x * x) / 3 : 2 * (1 - Math.sin(x) / x)
   }
 }
 

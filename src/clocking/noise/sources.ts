@@ -1,6 +1,7 @@
 import type { Bench } from '../../blocks/bench.ts'
 import type { RouteOutcome } from '../../blocks/sub-block.ts'
 import { formula } from '../../derivation/formula.ts'
+import type { Trace } from '../../derivation/trace.ts'
 import { BOLTZMANN, deviceAt, typicalPoint } from '../../device/conditions.ts'
 import { fo4At } from '../../device/fo4.ts'
 import { filterNoise } from '../loop/filter.ts'
@@ -58,6 +59,9 @@ const NONE = (symbol: string, meaning: string, unit: string) => ({
 })
 const NO_DETECTOR = NONE('A_det', 'a realigned oscillator has no detector', '1/Hz')
 const NO_FLICKER = NONE('a_fl', 'a realigned oscillator has no detector', '1')
+const UNDIVIDED = NONE('A_div', 'a sub-sampling loop locks without a divider', '1/Hz')
+const NOT_WHOLE =
+  'a realigned oscillator follows a whole multiple of its reference: with a fraction its edges miss by up to a period, which is not modelled'
 const NO_DIVIDER = NONE('A_div', 'a realigned oscillator has no divider in its loop', '1/Hz')
 const NO_MODULATOR = NONE('c_mod', 'the ratio is whole, so there is no modulator', '1/Hz')
 const NO_RESISTOR = NONE('q_R', 'a realigned oscillator has no loop filter', '1')
@@ -90,6 +94,8 @@ export function sourcesAt(bench: Bench): SourcesFound {
   if (!('noise' in found)) return found
   const { noise } = found
   const N = t.calc(multiplication, noise.f_0, loop.reference)
+  const fractional = loop.fractional === 'yes' || Math.abs(N - Math.round(N)) > WHOLE
+  if (fractional && loop.kind === 'realigned') return { unknown: NOT_WHOLE }
   const FO4 = fo4At(node, nmos, deviceAt(node.nmos, TYPICAL_300K, t), V_core, t)
   const V_ov = t.calc(gateOverdrive, V_core, nmos.V_T, nmos.of.n, nmos.U_T)
   const C_L = t.leaf(GATE_LOAD, GATE_LOAD.value)
@@ -101,7 +107,7 @@ export function sourcesAt(bench: Bench): SourcesFound {
   return {
     oscillator: noise,
     N,
-    fractional: loop.fractional === 'yes' || Math.abs(N - Math.round(N)) > WHOLE,
+    fractional,
     ...referenceAt(bench, N),
     A_rb: gates(loop.reference_buffers),
     ...detectorAt(bench, noise.f_0, N, gates),
@@ -150,6 +156,20 @@ function referenceAt({ settings, t }: Bench, N: number): Pick<Sources, 'A_ref' |
   return { A_ref: t.calc(multiplied, A, N), reference, N_sq }
 }
 
+/** Retiming of the divider, or its stated floor; a sub-sampling loop locks without one. */
+function dividerAt(
+  { detector, divider_floor }: NonNullable<Bench['settings']['loop']>,
+  N: number,
+  gates: (n: number) => number,
+  t: Trace,
+): number {
+  if (divider_floor !== null) {
+    const B_1 = t.leaf(ONE_HERTZ, ONE_HERTZ.value)
+    return t.calc(multiplied, t.calc(densityOf, divider_floor, B_1), N)
+  }
+  return detector === 'sub-sampling' ? t.leaf(UNDIVIDED, 0) : gates(t.leaf(RETIMING, RETIMING.value))
+}
+
 function detectorAt(
   { settings, t }: Bench,
   f_0: number,
@@ -174,10 +194,7 @@ function detectorAt(
   return {
     A_det: t.calc(densityOf, t.calc(detectorFloor, L_n, N, loop.reference, B_1), B_1),
     a_fl: t.calc(detectorFlicker, t.calc(densityOf, L_nf, B_1), f_0, carrier, t.leaf(OFFSET, OFFSET.value)),
-    A_div:
-      loop.divider_floor === null
-        ? gates(t.leaf(RETIMING, RETIMING.value))
-        : t.calc(multiplied, t.calc(densityOf, loop.divider_floor, B_1), N),
+    A_div: dividerAt(loop, N, gates, t),
     c_mod: whole
       ? t.leaf(NO_MODULATOR, 0)
       : t.calc(modulatorNoise, loop.reference, loop.modulator_cancellation),

@@ -33,11 +33,14 @@ const FAST = corner(10e6, 'IEEE 802.3bj, lanes of 25 GBd in PAM-2')
 /** From this symbol rate on, lanes in PAM-2 are tracked at a fixed corner [Bd]. */
 const FAST_RATE = 20e9
 
-/** Corner of the receiver's tracking [Hz]: the scenario's, the preset's, or that of its modulation; null for a clock. */
+/** Corner of the receiver's tracking [Hz]: the scenario's, the preset's, or that of its modulation; null for a clock without either. */
 export function trackingCorner({ block, settings, rates, t }: Bench): number | null {
   const budget = settings.jitter_budget
   if (budget?.tracking != null) return budget.tracking
-  if (block === 'clock') return null
+  if (block === 'clock') {
+    const tracking = budget?.preset == null ? null : PRESET_TABLE[budget.preset].tracking
+    return tracking === null ? null : t.leaf(corner(tracking, PRESET_TABLE[budget!.preset!].clause), tracking)
+  }
   const f_B = rates.f_B!
   if (budget?.preset != null) {
     const { tracking, clause } = PRESET_TABLE[budget.preset]

@@ -124,7 +124,7 @@ function panel(
     ...falls.flatMap((fall, k) => bar(shown, fall, scale, top + HEAD + ROW * k, write)),
     ...limits.flatMap(({ row, limit_s, word }) => {
       const k = falls.findIndex(({ id }) => id === row)
-      return limit(scale(limit_s), top + HEAD + ROW * k, word, row)
+      return limit(scale(limit_s), scale(falls[k]!.to), top + HEAD + ROW * k, word, row)
     }),
   ]
   return { marks, height: bottom + FOOT - top }
@@ -177,10 +177,17 @@ function bar(
   ]
 }
 
-function limit(x: number, y: number, word: string, row: string): readonly Mark[] {
+/** Room that the word beside the limit takes. */
+const WORD = 30
+
+/** The limit and its word: in its own row beside the line where there is room, inside the bar in white where not. */
+function limit(x: number, end: number, y: number, word: string, row: string): readonly Mark[] {
+  const left = x - WORD > end
+  const right = !left && x + WORD < RIGHT && x >= end
+  const at = left || !right ? x - 3 : x + 3
   return [
     { ...rule(x, y - 1, x, y + ROW, INK, 1.6), of: `allowed ${row}` },
-    words(x - 3, y - 2, word, 'end', INK),
+    words(at, y + 8.5, word, right ? 'start' : 'end', left || right ? INK : '#ffffff'),
   ]
 }
 

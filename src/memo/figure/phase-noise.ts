@@ -154,7 +154,7 @@ const KEY = RIGHT + 14
 function legend(
   curves: readonly { readonly id: string; readonly label: string; readonly drawn: Omit<Drawn, 'of'> }[],
   jitter: ReadonlyMap<string, number>,
-  { tracking_Hz, randomSum_s }: ClockingShown,
+  { tracking_Hz, random, randomSum_s }: ClockingShown,
   write: QuantityText,
 ): readonly Mark[] {
   const fs = (value: number | undefined): string => (value === undefined ? '' : write(value, 's', 'fs', 3))
@@ -164,9 +164,11 @@ function legend(
     { label: 'oscillator, free', drawn: FREE as Omit<Drawn, 'of'>, text: '' },
   ]
   const head = tracking_Hz === null ? 'rms jitter' : 'rms, tracked'
-  const path = jitter.get('path')
+  const inCurves = new Set(curves.map(({ id }) => id))
   const foot = [
-    ...(path === undefined ? [] : [`clock path adds ${fs(path)}`]),
+    ...random
+      .filter(({ id }) => !inCurves.has(id))
+      .map(({ label, value_s }) => `${label} adds ${fs(value_s)}`),
     `in all ${fs(randomSum_s)} rms`,
   ]
   return [

@@ -48,9 +48,17 @@ export function assumedText({ value, unit, shown }: Assumption, write: QuantityT
   if (value === null) return 'not stated'
   if (typeof value === 'string') return clean(value)
   if (typeof value === 'number') return valueText(value, unit, write, shown)
-  return value
+  const [first] = value
+  if (typeof first === 'object') return rowsText(value as readonly (readonly number[])[], write)
+  return (value as readonly (number | string)[])
     .map((one) => (typeof one === 'number' ? valueText(one, unit, write, shown) : clean(one)))
     .join(', ')
+}
+
+/** A measured profile by its length and its ends: the rows themselves are in the scenario. */
+function rowsText(rows: readonly (readonly number[])[], write: QuantityText): string {
+  const [least, most] = [rows[0]![0]!, rows.at(-1)![0]!]
+  return `${rows.length} rows from ${write(least, 'Hz')} to ${write(most, 'Hz')}`
 }
 
 function spreadText({ low, high, unit, shown }: Assumption, write: QuantityText): string {

@@ -41,8 +41,10 @@ export const PARTS_COLUMNS = [
   'Peaking',
   'Lock time',
   'Noise at 1 MHz',
-  'Half bandwidth',
-  'Twice',
+  'Best bandwidth',
+  'Jitter there',
+  'At half of it',
+  'At twice',
 ] as const
 
 type Clocked = CaseResult & { readonly clocking: ClockingShown }
@@ -97,7 +99,7 @@ function groupOf(
 const percent = (share: number): string => `${Math.round(100 * share)} %`
 
 function wordsOf(
-  { largest, randomSum_s, bandwidth_Hz, bandwidthFrom, fractional, multiplication }: ClockingShown,
+  { largest, leftOut, randomSum_s, bandwidth_Hz, bandwidthFrom, fractional, multiplication }: ClockingShown,
   name: string,
   write: QuantityText,
 ): readonly string[] {
@@ -111,6 +113,11 @@ function wordsOf(
   return [
     `In ${name} the clock runs at ${ratio}; the loop bandwidth is ${write(bandwidth_Hz, 'Hz')}, ${bandwidth}.`,
     `The largest line of random jitter is the ${largest.label} with ${percent(largest.share)} of the variance; halving it would bring ${write(randomSum_s, 's', 'fs', 3)} down to ${write(largest.halved_s, 's', 'fs', 3)} rms.`,
+    ...(leftOut.length === 0
+      ? []
+      : [
+          `The allowances are those of a transmitter: the receiver's own lines (${leftOut.join(', ')}) do not count against them and are not shown.`,
+        ]),
   ]
 }
 
@@ -156,6 +163,8 @@ const PARTS = [
   'clock.loop.peaking_dB',
   'clock.loop.lock_time_s',
   'clock.phaseNoise.at_1MHz_dBc_Hz',
+  'clock.loop.optimum_Hz',
+  'clock.loop.optimum_jitter_s',
   'clock.loop.half_bandwidth_jitter_s',
   'clock.loop.double_bandwidth_jitter_s',
 ] as const

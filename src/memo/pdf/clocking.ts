@@ -18,15 +18,15 @@ export function writeClocking(sheet: Sheet, model: MemoModel): void {
     return
   }
   sheet.paragraph(
-    'Every clock is shown at the operating point at which it jitters most. Figures show the node that comes closest to passing; the tables show all.',
+    'Every clock is shown at the operating point at which it jitters most. Noise of the loop is integrated over the stated band; the clock path and the aperture count with all their noise. Figures show the node that comes closest to passing; the tables show all.',
   )
   for (const { title, words, figures, jitter, parts } of clocking) {
-    sheet.heading(3, title, roomFor(sheet, figures[0]) + 40)
+    sheet.heading(3, title, roomFor(sheet, figures[0]) + 30 + roomForWords(words))
     for (const text of words) sheet.paragraph(text)
     for (const figure of figures) drawFigure(sheet, figure)
     rowsOf(sheet, `Jitter of ${title}`, clockingJitterColumns, jitter)
     sheet.paragraph(
-      'Loop filter, and random jitter of the loop at half and twice the best bandwidth, before any tracking:',
+      "Loop filter; then the bandwidth of least jitter, whichever is stated, and the loop's random jitter there, at half and at twice of it, before any tracking:",
       quiet(7.5),
       0,
       'P',
@@ -35,6 +35,10 @@ export function writeClocking(sheet: Sheet, model: MemoModel): void {
     rowsOf(sheet, `Loop of ${title}`, clockingPartsColumns, parts)
   }
 }
+
+/** About what paragraphs take, so that they stay with the figure behind them. */
+const roomForWords = (words: readonly string[]): number =>
+  words.reduce((sum, text) => sum + 4 + 12 * Math.ceil(text.length / 95), 0)
 
 function rowsOf(
   sheet: Sheet,

@@ -653,7 +653,7 @@ export const jitterBudget = section('Jitter allowances. Writing it asks for the 
   ...allowance('even_odd', 'Allowed even-odd jitter, peak to peak', 'EOJ', 1e-15, 1e-7),
   tracking: quantity({
     meaning:
-      'Corner below which the receiver tracks jitter. When absent: 4 MHz behind PAM-4 and PAM-8, 10 MHz behind PAM-2 from 20 GBd, else f_B/1667; a clock block is not tracked.',
+      'Corner below which the receiver tracks jitter. When absent: 4 MHz behind PAM-4 and PAM-8, 10 MHz behind PAM-2 from 20 GBd, else f_B/1667; a clock block is tracked only where its preset says so.',
     symbol: 'f_CDR',
     unit: 'Hz',
     shown: 'MHz',
